@@ -46,6 +46,13 @@ export interface StageHistory {
   readonly times: Float64Array;
   /** the unknowns at any instant between the first and the last of `times`, into `out` */
   at(time: number, out: Float64Array): Float64Array;
+  /**
+   * Integral of u over [0, time] for a `time` among `times`, weighed as the scheme itself weighs it, into `out`, so that
+   * C (u - u0) + K (integral of u) = sum of p_g (integral of a_g) holds on the free unknowns to the tolerance of the solves.
+   */
+  integral(time: number, out: Float64Array): Float64Array;
+  /** integral of a signal over [0, time] in the same sense */
+  signalIntegral(signal: Signal, time: number): number;
   readonly facts: MarchFacts;
 }
 
