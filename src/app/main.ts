@@ -1,0 +1,3 @@
+import "./styles/tokens.css";
+import "./styles/page.css";
+import "./app.ts";
