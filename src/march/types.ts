@@ -83,6 +83,8 @@ export interface MarchOptions {
 export interface MarchProgress {
   /** share of the duration done, 0 to 1 */
   readonly fraction: number;
+  /** what was computed so far, for a host that ends the march here; absent where nothing can be told yet */
+  readonly soFar?: () => StageHistory;
 }
 
 /** A scheme is a generator: it yields progress and returns the history, so that a host can cancel between yields. */
