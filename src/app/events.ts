@@ -2,6 +2,7 @@
  * What elements say upwards. Elements get values as properties and send these events; they bubble through shadow
  * roots to `corelag-app`, which alone changes the state.
  */
+import type { CaseDocument } from "../case/types.ts";
 import type { Recipe } from "../editor/history.ts";
 import type { Selection } from "../editor/selection.ts";
 import type { Pane, Shown, Theme, UnitSystem } from "./state.ts";
@@ -30,7 +31,7 @@ export interface EventDetails {
 export type Deed =
   | { kind: "undo" | "redo" | "save" | "open" | "new" | "retry" }
   | { kind: "read"; text: string; name: string }
-  | { kind: "begin"; document: import("../case/types.ts").CaseDocument }
+  | { kind: "begin"; document: CaseDocument }
   | { kind: "preset"; name: string };
 
 /** Sends one of the events above from an element. */
