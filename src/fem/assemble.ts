@@ -4,6 +4,7 @@
  *
  * Linear triangles get capacity and film lumped, six-node triangles get both consistent (see the element files).
  */
+import { elementSlots, patternFromElements, slotOf } from "../linalg/pattern.ts";
 import type { SparsityPattern } from "../linalg/pattern.ts";
 import type { ElementMesh } from "./elementMesh.ts";
 import { linearConductance, linearEdgeAreas, linearVolumes } from "./linearElement.ts";
@@ -14,6 +15,13 @@ export interface AssemblyTarget {
   readonly pattern: SparsityPattern;
   /** n x n places per element, row-major, n nodes per element */
   readonly elementSlots: Int32Array;
+}
+
+/** The pattern of a mesh's elements and their slots: once per mesh, whatever the values. */
+export function assemblyTarget(mesh: ElementMesh): AssemblyTarget {
+  const group = { nodes: mesh.elements, perElement: mesh.nodesPerElement };
+  const pattern = patternFromElements(mesh.nodes.length / 2, [group]);
+  return { pattern, elementSlots: elementSlots(pattern, group) };
 }
 
 /** Properties per region number. */
@@ -146,18 +154,4 @@ function edgeMatrix(mesh: ElementMesh, edge: number, matrix: Float64Array, areas
   matrix.fill(0);
   matrix[0] = areas[0]!;
   matrix[3] = areas[1]!;
-}
-
-/** Place of entry (row, column) in the pattern. Throws when the pattern does not hold it. */
-export function slotOf(pattern: SparsityPattern, row: number, column: number): number {
-  let low = pattern.rowStart[row]!;
-  let high = pattern.rowStart[row + 1]! - 1;
-  while (low <= high) {
-    const middle = (low + high) >> 1;
-    const found = pattern.columns[middle]!;
-    if (found === column) return middle;
-    if (found < column) low = middle + 1;
-    else high = middle - 1;
-  }
-  throw new Error(`the pattern has no entry at row ${row}, column ${column}`);
 }
