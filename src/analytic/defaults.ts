@@ -1,0 +1,22 @@
+/** Tolerances and ceilings of the closed-form answers. */
+
+/** Neglected terms of a series may add up to this much (of 1): far below what any reader of a curve can use. */
+export const SERIES_TOLERANCE = 1e-13;
+
+/** Terms a series may use: reaches down to a Fourier number of about 1e-6, 2 to 10 ms of root finding. */
+export const MAX_SERIES_TERMS = 2000;
+
+/**
+ * Below this Fourier number slab and sphere are answered by their skin layer, which is exact there: what comes back
+ * from the far side is erfc(1 / (2 sqrt(Fo))), less than 1e-100.
+ */
+export const SKIN_LAYER_FOURIER = 1e-3;
+
+/** From here on charts and hand calculations keep one term. What that costs is in tests/data/one_term_validity.csv. */
+export const ONE_TERM_FOURIER = 0.2;
+
+/** Terms per direction that a staged series carries from stage to stage; 2-D products carry this many squared. */
+export const MAX_STAGED_TERMS = 160;
+
+/** A staged series is used from the instant its first missing term has decayed to this share. */
+export const STAGED_TOLERANCE = 1e-9;
