@@ -109,8 +109,10 @@ export const blankStyle = css`
     background: none;
     color: var(--ink-3);
   }
+  /* floats below the line the blank stands in, so that the sentence is not torn apart */
   .fault {
-    display: block;
+    float: left;
+    width: 100%;
     color: var(--bad);
     font-size: var(--t-note, 13.5px);
     font-weight: var(--w-text, 440);
