@@ -3,6 +3,7 @@
  * vectors and the signals that drive them.
  */
 import type { SparsityPattern } from "../linalg/pattern.ts";
+import type { MarchWorkspace } from "./workspace.ts";
 
 /** A function of time, piecewise linear, held constant beyond its ends; `times` strictly increasing [s]. */
 export interface Signal {
@@ -77,6 +78,8 @@ export interface MarchOptions {
   readonly firstInstant: number;
   /** stop before `duration`: called at each accepted step with the time and the unknowns; true ends the march there */
   readonly stop?: (time: number, u: Float64Array) => boolean;
+  /** what the host keeps between marches, so that nothing is worked out twice; without it everything is made anew */
+  readonly workspace?: MarchWorkspace;
 }
 
 /** What a march reports on its way; the host decides whether to pause or to end it. */

@@ -1,0 +1,164 @@
+/**
+ * One face for the ways of solving a sparse symmetric positive definite system, so that who marches in time need not
+ * know which is at work: an exact sparse factor in WebAssembly, or conjugate gradients with an incomplete factor in
+ * plain TypeScript where WebAssembly SIMD is missing.
+ *
+ * Analysis (pattern only) is done once by `makeSolver`; values come and go through factors. Everything a solver takes
+ * and gives after the analysis is in its own ("inner") numbering: see numbering.ts.
+ */
+import { bandOrdering } from "./bandOrdering.ts";
+import { conjugateGradients, conjugateGradientsWork } from "./conjugateGradients.ts";
+import { RELATIVE_RESIDUAL } from "./defaults.ts";
+import { NotPositiveDefiniteError } from "./errors.ts";
+import { incompleteCholesky } from "./incompleteCholesky.ts";
+import {
+  gatherValues,
+  numberingFrom,
+  renumberPattern,
+  toInner,
+  toOuter,
+  type Numbering,
+  type RenumberedPattern,
+} from "./numbering.ts";
+import { multiply, type SparsityPattern } from "./pattern.ts";
+
+export type SolverKind = "cholesky" | "conjugate-gradients";
+
+/** A matrix held where it multiplies fastest. Vectors in the inner numbering. */
+export interface HeldMatrix {
+  /** values on the inner pattern, taken over */
+  refresh(values: Float64Array): void;
+  /** out = A x; `out` must not be `x` */
+  multiply(x: Float64Array, out: Float64Array): Float64Array;
+}
+
+/** What is needed to solve with one matrix. Vectors in the inner numbering. */
+export interface Factor {
+  /**
+   * Take over the values of a matrix (on the inner pattern), in place of the last one.
+   * @throws NotPositiveDefiniteError with the unknown (outer number), the pivot and the reason
+   */
+  refresh(values: Float64Array): void;
+  /**
+   * Solve A x = b. `x` holds a guess on entry, which an exact factor ignores. `x` may be `b` for an exact factor only.
+   * @returns iterations spent: 1 for an exact factor
+   */
+  solve(b: Float64Array, x: Float64Array): number;
+}
+
+export interface SparseSolver {
+  readonly kind: SolverKind;
+  readonly numbering: Numbering;
+  /** the pattern in the inner numbering, with the outer place of each entry */
+  readonly inner: RenumberedPattern;
+  readonly facts: AnalysisFacts;
+  /** a new factor, empty until refreshed */
+  factor(): Factor;
+  matrix(): HeldMatrix;
+  /** give the memory back; factors and matrices of this solver are dead afterwards */
+  release(): void;
+}
+
+export interface AnalysisFacts {
+  /** nonzeros of the triangular factor */
+  readonly factorEntries: number;
+  /** multiplications and additions of one numeric factorization */
+  readonly factorWork: number;
+}
+
+export interface SolverOptions {
+  /** "cholesky" where it can run, unless one is forced */
+  readonly kind?: SolverKind;
+  /** of conjugate gradients */
+  readonly relativeResidual?: number;
+}
+
+/** Conjugate gradients with an incomplete factor, in a numbering of narrow band. */
+export function conjugateGradientsSolver(
+  pattern: SparsityPattern,
+  options: SolverOptions = {},
+): SparseSolver {
+  const numbering = numberingFrom(bandOrdering(pattern));
+  const inner = renumberPattern(pattern, numbering);
+  const aim = { relativeResidual: options.relativeResidual ?? RELATIVE_RESIDUAL };
+  const work = conjugateGradientsWork(pattern.size);
+  return {
+    kind: "conjugate-gradients",
+    numbering,
+    inner,
+    facts: {
+      factorEntries: (inner.source.length + pattern.size) / 2,
+      factorWork: 0,
+    },
+    factor() {
+      const preconditioner = incompleteCholesky(inner.pattern);
+      const own = new Float64Array(inner.source.length);
+      return {
+        refresh(values) {
+          own.set(values);
+          withOuterNumber(numbering, () => preconditioner.refresh(own));
+        },
+        solve: (b, x) => conjugateGradients(inner.pattern, own, b, preconditioner, work, aim, x),
+      };
+    },
+    matrix() {
+      const own = new Float64Array(inner.source.length);
+      return {
+        refresh: (values) => own.set(values),
+        multiply: (x, out) => multiply(inner.pattern, own, x, out),
+      };
+    },
+    release() {
+      // Plain arrays: the garbage collector takes them.
+    },
+  };
+}
+
+/**
+ * Analyse a pattern for solving. Coordinates (2 per unknown) are used for ordering only; without them the graph
+ * alone decides.
+ */
+export function makeSolver(
+  pattern: SparsityPattern,
+  coordinates: Float64Array | undefined,
+  options: SolverOptions = {},
+): SparseSolver {
+  void coordinates;
+  return conjugateGradientsSolver(pattern, options);
+}
+
+/**
+ * Solve A x = b once, everything in the outer numbering: for steady states and the like.
+ *
+ * @throws NotPositiveDefiniteError when A is singular (say every side insulated) or indefinite
+ */
+export function solveOnce(
+  pattern: SparsityPattern,
+  coordinates: Float64Array | undefined,
+  values: Float64Array,
+  b: Float64Array,
+  out: Float64Array,
+  options: SolverOptions = {},
+): Float64Array {
+  const solver = makeSolver(pattern, coordinates, options);
+  try {
+    const factor = solver.factor();
+    factor.refresh(gatherValues(solver.inner.source, values, new Float64Array(values.length)));
+    const innerB = toInner(solver.numbering, b, new Float64Array(b.length));
+    const innerX = new Float64Array(b.length);
+    factor.solve(innerB, innerX);
+    return toOuter(solver.numbering, innerX, out);
+  } finally {
+    solver.release();
+  }
+}
+
+/** Errors name unknowns as the caller numbers them. */
+function withOuterNumber({ outerOf }: Numbering, action: () => void): void {
+  try {
+    action();
+  } catch (error) {
+    if (!(error instanceof NotPositiveDefiniteError) || error.unknown < 0) throw error;
+    throw new NotPositiveDefiniteError(outerOf[error.unknown]!, error.pivot, error.diagonal);
+  }
+}
