@@ -7,9 +7,7 @@
 export type Quantity = number | string;
 export type QuantityPair = [Quantity, Quantity];
 export type CurveDocument =
-  | Quantity
-  | QuantityPair[]
-  | { over: "time" | "temperature"; points: QuantityPair[] };
+  Quantity | QuantityPair[] | { over: "time" | "temperature"; points: QuantityPair[] };
 
 export interface VertexDocument {
   at: QuantityPair;
@@ -81,7 +79,8 @@ export interface CaseDocument {
 // --- read: SI, defaults filled in ---------------------------------------------------------------------------------
 
 /** A constant, or a piecewise linear table over one variable, held constant beyond its ends. */
-export type Curve = number | { readonly over: "time" | "temperature"; readonly points: readonly (readonly [number, number])[] };
+export type Curve =
+  number | { readonly over: "time" | "temperature"; readonly points: readonly (readonly [number, number])[] };
 
 export interface Vertex {
   readonly at: readonly [r: number, z: number];
