@@ -11,13 +11,17 @@ import { caseSchema, FORMAT_VERSION } from "./schema.ts";
 import type { ParsedCase } from "./schema.ts";
 import type { Case, CaseDocument, CaseProblem } from "./types.ts";
 
+export type { MaterialLibrary } from "./library.ts";
+
 export type ReadCase =
   | {
       readonly case: Case;
       /** what was read, for saving it again as the person wrote it */
       readonly document: CaseDocument;
-      /** things that are allowed but look like a slip */
-      readonly warnings: readonly CaseProblem[];
+      /** things that are allowed but look like a slip, each with its place */
+      readonly hints: readonly CaseProblem[];
+      /** the same as sentences, for the result and the report */
+      readonly warnings: readonly string[];
     }
   | { readonly problems: readonly CaseProblem[] };
 
@@ -58,7 +62,9 @@ function readDocument(document: unknown, library: MaterialLibrary): ReadCase {
   const filled = fillCase(parsed.data, library);
   const dark = radiationProblems(parsed.data, filled);
   if (dark.length > 0) return { problems: dark };
-  return { case: filled, document: document as CaseDocument, warnings: hintsOf(filled) };
+  const hints = hintsOf(filled);
+  const warnings = hints.map(({ message, mend }) => `${message} ${mend}`);
+  return { case: filled, document: document as CaseDocument, hints, warnings };
 }
 
 /** A document of another version is not read on: its faults would be those of the wrong format. */

@@ -114,7 +114,7 @@ const EXAMPLE: CaseDocument = {
 
 function read(document: unknown): {
   case: Case;
-  warnings: readonly { code: string; message: string; mend: string }[];
+  hints: readonly { code: string; message: string; mend: string }[];
 } {
   const result = readCase(document, LIBRARY);
   if ("problems" in result) throw new Error(JSON.stringify(result.problems, null, 1));
@@ -224,7 +224,7 @@ describe("hints", () => {
   const hintsFor = (spoil: (document: CaseDocument) => void): string[] => {
     const document = plain();
     spoil(document);
-    return read(document).warnings.map((hint) => `${hint.code}: ${hint.message} ${hint.mend}`);
+    return read(document).hints.map((hint) => `${hint.code}: ${hint.message} ${hint.mend}`);
   };
   test("none for a plain case", () => {
     expect(hintsFor(() => undefined)).toEqual([]);
