@@ -15,8 +15,15 @@ export const SKIN_LAYER_FOURIER = 1e-3;
 /** From here on charts and hand calculations keep one term. What that costs is in tests/data/one_term_validity.csv. */
 export const ONE_TERM_FOURIER = 0.2;
 
-/** Terms per direction that a staged series carries from stage to stage; 2-D products carry this many squared. */
-export const MAX_STAGED_TERMS = 160;
-
-/** A staged series is used from the instant its first missing term has decayed to this share. */
+/** A staged series is used from the instant its highest mode has decayed to this share. */
 export const STAGED_TOLERANCE = 1e-9;
+
+/** Modes a staged series carries at least, and at most: one direction down to a Fourier number of 1.3e-5. */
+export const FEWEST_MODES = 12;
+export const MOST_MODES = 400;
+
+/** At most in each direction of a finite cylinder, whose modes multiply: down to a Fourier number of 8e-5. */
+export const MOST_MODES_PER_DIRECTION = 160;
+
+/** At least, where the surroundings run: the lag behind a ramp falls only with the third power of the eigenvalue. */
+export const RAMP_MODES = 48;
