@@ -1,0 +1,212 @@
+/**
+ * What the outline asks of the size of the triangles: the relative size along every side, in the middle of walls,
+ * at corners and at requested points. The size tree spreads it into the part.
+ */
+import { chordsOf, type Chords } from "./chords.ts";
+import { wedgesOf, type Wedge } from "./corners.ts";
+import {
+  ARC_MOST,
+  ARC_SHARE,
+  FINEST_SHARE,
+  LARGEST_SHARE,
+  POINT_SHARE,
+  REENTRANT_ANGLE,
+  REENTRANT_SHARE,
+  SIDE_MOST,
+  WALL_TRIANGLES,
+} from "./defaults.ts";
+import type { Outline, Piece } from "./outline.ts";
+import { curveAt, curveTangent, distanceToCurve } from "./plane.ts";
+import { wallThickness } from "./wallThickness.ts";
+
+/** Numbers per source: x, y, dx, dy of a straight stretch, size at its two ends, and a limit that does not scale. */
+export const SOURCE_STRIDE = 7;
+
+export interface SizeSources {
+  /** SOURCE_STRIDE numbers per stretch; the stretches on sides come last, from `sideStart` on */
+  readonly stretches: Float64Array;
+  readonly count: number;
+  readonly sideStart: number;
+  /** largest relative size [m] */
+  readonly largest: number;
+  readonly chords: Chords;
+  /** wedges of material at each vertex */
+  readonly wedges: Wedge[][];
+  /** smallest angle with material at each vertex [rad], Infinity without any */
+  readonly sharpest: Float64Array;
+}
+
+/** Relative sizes at samples along one piece. */
+interface SideSamples {
+  readonly piece: Piece;
+  readonly x: number[];
+  readonly y: number[];
+  readonly size: number[];
+  /** what the size must not exceed however few nodes are asked for [m] */
+  readonly limit: number;
+}
+
+/** Samples of the whole outline; each piece gets its share of these, 5 at least. */
+const SAMPLES = 400;
+const MOST_SAMPLES = 200;
+const LEAST_SAMPLES = 5;
+
+export function sizeSources(outline: Outline): SizeSources {
+  const largest = LARGEST_SHARE * outline.size;
+  const chords = chordsOf(outline);
+  const wedges = wedgesOf(outline);
+  const list: number[] = [];
+  const samples = sampleSizes(outline, chords, largest, list);
+  refineAtCorners(samples, wedges);
+  addPoints(outline, largest, list);
+  const sideStart = list.length / SOURCE_STRIDE;
+  for (const side of samples) addStretches(side, list);
+  return {
+    stretches: withFloor(list, FINEST_SHARE * outline.size),
+    count: list.length / SOURCE_STRIDE,
+    sideStart,
+    largest,
+    chords,
+    wedges,
+    sharpest: Float64Array.from(wedges, (at) => at.reduce((least, w) => Math.min(least, w.angle), Infinity)),
+  };
+}
+
+function withFloor(list: readonly number[], finest: number): Float64Array {
+  const stretches = Float64Array.from(list);
+  for (let i = 0; i < stretches.length; i += SOURCE_STRIDE) {
+    for (let k = 4; k < SOURCE_STRIDE; k++) stretches[i + k] = Math.max(stretches[i + k]!, finest);
+  }
+  return stretches;
+}
+
+/** Sizes along all pieces; the middles of walls go straight into the list of sources. */
+function sampleSizes(outline: Outline, chords: Chords, largest: number, list: number[]): SideSamples[] {
+  const perimeter = outline.pieces.reduce((sum, piece) => sum + piece.length, 0);
+  const skip = new Uint8Array(outline.pieces.length);
+  return outline.pieces.map((piece) => {
+    const neighbours = [...outline.ends[piece.a]!, ...outline.ends[piece.b]!];
+    for (const k of neighbours) skip[k] = 1;
+    const n = Math.ceil((piece.length / perimeter) * SAMPLES);
+    const samples = samplePiece(
+      piece,
+      Math.max(LEAST_SAMPLES, Math.min(MOST_SAMPLES, n)),
+      largest,
+      chords,
+      skip,
+      list,
+    );
+    for (const k of neighbours) skip[k] = 0;
+    return samples;
+  });
+}
+
+function samplePiece(
+  piece: Piece,
+  n: number,
+  largest: number,
+  chords: Chords,
+  skip: Uint8Array,
+  list: number[],
+): SideSamples {
+  const x: number[] = [];
+  const y: number[] = [];
+  const size: number[] = [];
+  const p = [0, 0];
+  const t = [0, 0];
+  const middles = [
+    new WallMiddle(list, (2 * piece.length) / n),
+    new WallMiddle(list, (2 * piece.length) / n),
+  ];
+  const bend = piece.arc ? piece.arc.radius : Infinity;
+  for (let i = 0; i <= n; i++) {
+    curveAt(piece, i / n, p);
+    curveTangent(piece, i / n, t);
+    let h = Math.min(largest, SIDE_MOST * piece.length, ARC_SHARE * bend);
+    for (const hand of [1, -1]) {
+      if ((hand > 0 ? piece.left : piece.right) < 0) continue;
+      const nx = -t[1]! * hand;
+      const ny = t[0]! * hand;
+      const wall = wallThickness(p[0]!, p[1]!, nx, ny, chords, skip);
+      h = Math.min(h, wall / WALL_TRIANGLES);
+      middles[hand > 0 ? 0 : 1]!.add(
+        p[0]! + (nx * wall) / 2,
+        p[1]! + (ny * wall) / 2,
+        wall / WALL_TRIANGLES,
+        largest,
+      );
+    }
+    x.push(p[0]!);
+    y.push(p[1]!);
+    size.push(h);
+  }
+  return { piece, x, y, size, limit: Math.min(ARC_MOST * bend, SIDE_MOST * piece.length) };
+}
+
+/** Joins the middles of a wall, sample after sample, into stretches of sources. */
+class WallMiddle {
+  private x = NaN;
+  private y = NaN;
+  private size = NaN;
+
+  constructor(
+    private readonly list: number[],
+    private readonly reach: number,
+  ) {}
+
+  add(x: number, y: number, size: number, largest: number): void {
+    if (!(size < largest)) {
+      this.x = NaN;
+      return;
+    }
+    if (Math.hypot(this.x - x, this.y - y) < this.reach) {
+      this.list.push(this.x, this.y, x - this.x, y - this.y, this.size, size, Infinity);
+    } else {
+      this.list.push(x, y, 0, 0, size, size, Infinity);
+    }
+    this.x = x;
+    this.y = y;
+    this.size = size;
+  }
+}
+
+/** The field is steep at a re-entrant corner: the samples that lie at one are made smaller. */
+function refineAtCorners(samples: readonly SideSamples[], wedges: readonly Wedge[][]): void {
+  for (const { piece, size } of samples) {
+    for (const [vertex, i] of [
+      [piece.a, 0],
+      [piece.b, size.length - 1],
+    ] as const) {
+      if (wedges[vertex]!.some((w) => w.angle > REENTRANT_ANGLE)) size[i]! *= REENTRANT_SHARE;
+    }
+  }
+}
+
+/** A requested point near a side or another point needs triangles that fit between. */
+function addPoints(outline: Outline, largest: number, list: number[]): void {
+  outline.inner.forEach(([x, y], k) => {
+    let nearest = Infinity;
+    for (const piece of outline.pieces) nearest = Math.min(nearest, distanceToCurve(piece, x, y));
+    outline.inner.forEach(([x2, y2], k2) => {
+      if (k2 !== k) nearest = Math.min(nearest, Math.hypot(x - x2, y - y2));
+    });
+    const size = POINT_SHARE * nearest;
+    list.push(x, y, 0, 0, Math.min(size, largest), Math.min(size, largest), size);
+  });
+}
+
+/** Consecutive samples as stretches; on a line, samples that a straight fit replaces within 3 % are left out. */
+function addStretches({ piece, x, y, size, limit }: SideSamples, list: number[]): void {
+  for (let i = 0, j = 1; i + 1 < size.length; i = j++) {
+    if (!piece.arc) while (j + 1 < size.length && isNearlyStraight(size, i, j + 1)) j++;
+    list.push(x[i]!, y[i]!, x[j]! - x[i]!, y[j]! - y[i]!, size[i]!, size[j]!, limit);
+  }
+}
+
+function isNearlyStraight(size: readonly number[], i: number, j: number): boolean {
+  for (let k = i + 1; k < j; k++) {
+    const fit = size[i]! + ((size[j]! - size[i]!) * (k - i)) / (j - i);
+    if (Math.abs(size[k]! - fit) > 0.03 * size[k]!) return false;
+  }
+  return true;
+}
