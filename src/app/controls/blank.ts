@@ -181,7 +181,7 @@ export class CorelagBlank extends LitElement {
     const plain = plainNumber(number, strideOf(this.step, keys));
     this.plain = plain;
     this.moving = number;
-    this.draft = this.unitShown === "" ? plain : `${plain}\u202f${this.unitShown}`;
+    this.draft = this.unitShown === "" ? plain : `${plain}\u00a0${this.unitShown}`;
     this.ownFault = null;
     this.tell("scrub", withUnit(plain, this.unit));
   }

@@ -8,7 +8,10 @@ import type { Dimension, UnitSystem } from "../../case/units.ts";
 export { fromShown, toShown, unitText };
 export type { Dimension, UnitSystem };
 
-export const THIN = "\u202f";
+/** Between figure and unit: as wide as the thin space of this face, and never broken. */
+export const THIN = "\u00a0";
+/** Between groups of figures. */
+const GROUP = "\u202f";
 const MINUTE = 60;
 const HOUR = 3600;
 const DAY = 86_400;
@@ -30,7 +33,7 @@ export function roundUp(doubt: number): number {
 export function digits(value: number, decimals: number): string {
   const text = Math.abs(value).toFixed(decimals);
   const [whole = "", part] = text.split(".");
-  const grouped = whole.length >= 5 ? whole.replace(/\B(?=(\d{3})+$)/g, THIN) : whole;
+  const grouped = whole.length >= 5 ? whole.replace(/\B(?=(\d{3})+$)/g, GROUP) : whole;
   const sign = value < 0 && Number(text) !== 0 ? "\u2212" : "";
   return sign + grouped + (part === undefined ? "" : `.${part}`);
 }
@@ -107,6 +110,13 @@ export function resolutionOf(seconds: number, doubt: number | null): number {
   if (size >= LONG) return MINUTE;
   if (size >= SHORT || doubt === null || !(doubt > 0)) return size < 100 ? 0.1 : 1;
   return 10 ** Math.floor(Math.log10(Math.max(doubt, 0.1)) + 1e-9);
+}
+
+/** How long something lasts, as people say it: "6 min" rather than "360 s". */
+export function lasting(seconds: number): string {
+  return seconds >= 120 && Math.abs(seconds - Math.round(seconds / MINUTE) * MINUTE) < 0.5 && seconds < LONG
+    ? longDuration(Math.round(seconds / MINUTE))
+    : duration(seconds);
 }
 
 /** "115.2 s", "49 min", "3 h 46 min", "2 d 4 h": to the resolution given [s]. */

@@ -2,13 +2,14 @@
 import { nothing, svg } from "lit";
 import type { SVGTemplateResult } from "lit";
 import type { UnitSystem } from "../../case/units.ts";
-import { duration, temperature } from "../controls/figures.ts";
+import { duration, lasting, temperature } from "../controls/figures.ts";
 import { cross, f } from "./draw-scales.ts";
 import type { Frame } from "./frame.ts";
 import { textWidth, touch, within } from "./place-labels.ts";
 import type { Box } from "./place-labels.ts";
 import { boundsOf } from "./reading.ts";
 import type { Reading } from "./reading.ts";
+import { valueOn } from "./schedule.ts";
 import type { Knot, LinePlace, StageBlock, SurroundingsLine } from "./schedule.ts";
 import type { Scales } from "./scales.ts";
 import { endWords, plain } from "./spoken.ts";
@@ -71,11 +72,12 @@ const pressedKey = (event: KeyboardEvent): boolean => event.key === "Enter";
 function drawHung(block: StageBlock, scales: Scales, from: number, to: number): SVGTemplateResult {
   const middle = (from + to) / 2;
   const y = scales.bottom - 24 - (block.index % 2) * 18;
-  const words = `${block.name} ${duration(block.ended - block.began)}`;
+  const length = lasting(block.ended - block.began);
+  const words = `${block.name} ${length}`;
   const left = middle - 10 - textWidth(words, scales.room.noteSize) > scales.room.left + 12;
   const [anchor, x, thread] = left ? ["end", middle - 10, -7] : ["start", middle + 10, 7];
   return svg`<path class="thread" d="M${f(middle)} ${scales.room.row}v-6M${f(middle)} ${y - 4}h${thread}" />
-    <text class="hung" x=${f(x)} y=${y} text-anchor=${anchor}><tspan class="hung-name">${block.name}</tspan> ${duration(block.ended - block.began)}</text>`;
+    <text class="hung" x=${f(x)} y=${y} text-anchor=${anchor}><tspan class="hung-name">${block.name}</tspan> ${length}</text>`;
 }
 
 function drawEdge(block: StageBlock, scales: Scales): SVGTemplateResult {
@@ -191,7 +193,7 @@ function placeName(
   const [from, to] = [scales.x(knots[0]?.at ?? 0), scales.x(knots.at(-1)?.at ?? 0)];
   if (to - from < width + 24) return null;
   for (const x of [to - width - 10, from + 14, (from + to - width) / 2]) {
-    const level = scales.y(valueNear(knots, scales.seconds(x + width / 2)));
+    const level = scales.y(valueOn(knots, scales.seconds(x + width / 2)));
     for (const y of [level - height - 2, level + 4]) {
       const box = { x, y, width, height };
       if (within(box, boundsOf(scales)) && !taken.some((other) => touch(box, other, 2)) && free(box, frame))
@@ -199,11 +201,6 @@ function placeName(
     }
   }
   return null;
-}
-
-function valueNear(knots: readonly Knot[], at: number): number {
-  const after = knots.findIndex((knot) => knot.at >= at);
-  return (knots[after] ?? knots.at(-1))?.degC ?? 0;
 }
 
 function free(box: Box, { crowd }: Frame): boolean {

@@ -65,7 +65,7 @@ export function makeFrame(inputs: FrameInputs): Frame {
       : curvesOf(was)
           .filter(({ habit }) => habit === "core" || habit === "skin")
           .map((curve) => pathOf(pointsOf(curve, scales)));
-  const crowd = crowdOf(drawn, schedule, scales);
+  const crowd = crowdOf(drawn, schedule, marks, scales);
   const range = result === null ? null : temperatureRange(result);
   return { schedule, scales, curves: drawn, ghosts, marks, range, crowd, end, system };
 }
@@ -88,9 +88,15 @@ function newScales(
 function crowdOf(
   curves: readonly DrawnCurve[],
   schedule: readonly StageBlock[],
+  marks: readonly AnswerMark[],
   scales: Scales,
 ): Float64Array {
   const lines = curves.map((curve) => along(curve.points, CROWD_STEP));
+  for (const { level } of marks) {
+    if (level === null) continue;
+    const y = scales.y(level.degC);
+    lines.push(along(Float64Array.of(scales.x(level.from), y, scales.x(level.to), y), CROWD_STEP));
+  }
   for (const block of schedule)
     for (const line of block.lines) {
       const points = line.knots.flatMap((knot) => [scales.x(knot.at), scales.y(knot.degC)]);

@@ -19,54 +19,172 @@ export interface TimeGraduations {
   readonly lines: readonly Graduation[];
 }
 
-type Ladder = readonly (readonly [minor: number, middle: number, major: number])[];
-
-/** Steps that people count in, in seconds: a long line every so often, cut in ways that the eye can count. */
-const LADDER: Ladder = [
-  [0.1, 0.5, 1],
-  [0.2, 1, 2],
-  [0.5, 1, 5],
-  [1, 5, 10],
-  [2, 10, 20],
-  [5, 10, 30],
-  [10, 30, 60],
-  [20, 60, 120],
-  [30, 60, 300],
-  [60, 300, 600],
-  [120, 600, 1200],
-  [300, 600, 1800],
-  [600, 1800, 3600],
-  [1200, 3600, 7200],
-  [1800, 3600, 10_800],
-  [3600, 10_800, 21_600],
-  [3600, 21_600, 43_200],
-  [7200, 43_200, 86_400],
-  [21_600, 86_400, 172_800],
-  [43_200, 86_400, 432_000],
-  [86_400, 432_000, 864_000],
-  [172_800, 864_000, 1_728_000],
+/** Long lines that people count by [s], and how each may be cut: short and middle lines, the finest cut first. */
+type Cuts = readonly (readonly [minor: number, middle: number])[];
+const LADDER: readonly (readonly [major: number, cuts: Cuts])[] = [
+  [1, [[0.1, 0.5]]],
+  [
+    2,
+    [
+      [0.2, 1],
+      [0.5, 1],
+    ],
+  ],
+  [
+    5,
+    [
+      [0.5, 1],
+      [1, 5],
+    ],
+  ],
+  [
+    10,
+    [
+      [1, 5],
+      [2, 10],
+    ],
+  ],
+  [
+    20,
+    [
+      [2, 10],
+      [5, 10],
+    ],
+  ],
+  [
+    30,
+    [
+      [5, 10],
+      [10, 30],
+    ],
+  ],
+  [
+    60,
+    [
+      [5, 30],
+      [10, 30],
+      [20, 60],
+    ],
+  ],
+  [
+    120,
+    [
+      [10, 60],
+      [20, 60],
+      [60, 120],
+    ],
+  ],
+  [
+    300,
+    [
+      [30, 60],
+      [60, 300],
+    ],
+  ],
+  [
+    600,
+    [
+      [60, 300],
+      [120, 600],
+    ],
+  ],
+  [
+    1200,
+    [
+      [120, 600],
+      [300, 600],
+    ],
+  ],
+  [
+    1800,
+    [
+      [300, 600],
+      [600, 1800],
+    ],
+  ],
+  [
+    3600,
+    [
+      [300, 1800],
+      [600, 1800],
+      [1200, 3600],
+    ],
+  ],
+  [
+    7200,
+    [
+      [600, 3600],
+      [1200, 3600],
+      [3600, 7200],
+    ],
+  ],
+  [
+    10_800,
+    [
+      [1800, 3600],
+      [3600, 10_800],
+    ],
+  ],
+  [
+    21_600,
+    [
+      [3600, 10_800],
+      [7200, 21_600],
+    ],
+  ],
+  [
+    43_200,
+    [
+      [3600, 21_600],
+      [7200, 21_600],
+      [21_600, 43_200],
+    ],
+  ],
+  [
+    86_400,
+    [
+      [7200, 43_200],
+      [21_600, 43_200],
+      [43_200, 86_400],
+    ],
+  ],
+  [
+    172_800,
+    [
+      [21_600, 86_400],
+      [43_200, 86_400],
+    ],
+  ],
+  [432_000, [[86_400, 432_000]]],
+  [
+    864_000,
+    [
+      [86_400, 432_000],
+      [172_800, 864_000],
+    ],
+  ],
 ];
 const UNITS = [
-  { word: "days", seconds: 86_400 },
-  { word: "hours", seconds: 3600 },
-  { word: "minutes", seconds: 60 },
-  { word: "seconds", seconds: 1 },
+  { word: "days", seconds: 86_400, from: 4 * 86_400 },
+  { word: "hours", seconds: 3600, from: 2.5 * 3600 },
+  { word: "minutes", seconds: 60, from: 4 * 60 },
+  { word: "seconds", seconds: 1, from: 0 },
 ] as const;
 
 /** px below which two figures would touch, and two short lines would run together */
 const FIGURE_ROOM = 44;
-const LINE_ROOM = 5;
+const LINE_ROOM = 7;
 
 /**
- * Time graduations from 0 to `end` [s] on a scale of `width` px. The word is the largest unit in which the long
- * lines carry whole numbers, so that a scale reads 0, 1, 2 hours rather than 0, 60, 120 minutes.
+ * Time graduations from 0 to `end` [s] on a scale of `width` px. The word goes by the length of the whole treatment
+ * (hours from two and a half on), and the long lines carry whole numbers of it.
  */
 export function timeGraduations(end: number, width: number): TimeGraduations {
   const pixels = width / Math.max(end, 1e-9);
-  const rung = LADDER.find(([, , major]) => major * pixels >= FIGURE_ROOM) ?? coarse(end);
-  const [fine, middle, major] = rung;
-  const minor = fine * pixels >= LINE_ROOM ? fine : middle;
-  const unit = UNITS.find(({ seconds }) => isMultiple(major, seconds)) ?? UNITS[3];
+  const unit = UNITS.find(({ from }) => end >= from) ?? UNITS[3];
+  const fits = LADDER.find(([major]) => major * pixels >= FIGURE_ROOM && isMultiple(major, unit.seconds));
+  const [major, cuts] = fits ?? coarse(end, width);
+  const [minor, middle] = cuts.find(([line]) => line * pixels >= LINE_ROOM) ?? [major, major];
   const lines: Graduation[] = [];
   for (let i = 0; i * minor <= end * (1 + 1e-9); i++) {
     const at = i * minor;
@@ -76,15 +194,23 @@ export function timeGraduations(end: number, width: number): TimeGraduations {
   return { word: unit.word, minor, middle, major, lines };
 }
 
-/** Beyond the ladder: days by 1, 2, 5. */
-function coarse(end: number): [number, number, number] {
-  const major = niceStep(end / 86_400 / 10) * 86_400;
-  return [major / 10, major / 2, major];
+/** Beyond the ladder at both ends: by 1, 2, 5 of a day or of a second. */
+function coarse(end: number, width: number): [number, Cuts] {
+  const least = (end * FIGURE_ROOM) / width;
+  const unit = least > 1 ? 86_400 : 1;
+  const major = niceStep(least / unit) * unit;
+  return [
+    major,
+    [
+      [major / 10, major / 2],
+      [major / 2, major],
+    ],
+  ];
 }
 
 function isMultiple(value: number, step: number): boolean {
   const share = value / step;
-  return Math.abs(share - Math.round(share)) < 1e-6;
+  return Math.abs(share - Math.round(share)) < 1e-6 && Math.round(share) >= (value === 0 ? 0 : 1);
 }
 
 /** The smallest of 1, 2, 5 times a power of ten that is not below `least`. */

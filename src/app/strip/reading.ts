@@ -31,8 +31,8 @@ export interface Reading {
 const ROWS = 3;
 const SAMPLE = 26;
 const APART = 14;
-/** px between cursor and reading */
-const OFF = 16;
+/** px between cursor and reading: close, or out of the way of what begins at the cursor */
+const OFF = [16, 74] as const;
 
 export function readingRows(curves: readonly Curve[], at: number, system: UnitSystem): ReadingRow[] {
   return curves.map(({ habit, name, time, values }) => ({
@@ -55,8 +55,8 @@ export function placeReading(
   const columns = Array.from({ length: Math.ceil(rows.length / ROWS) }, (_, i) =>
     rows.slice(i * ROWS, (i + 1) * ROWS),
   );
-  const valueWidth = Math.max(3.2 * size * 0.5, ...rows.map((row) => textWidth(row.value, size * 1.06)));
-  const valueEnd = SAMPLE + 8 + valueWidth;
+  const valueWidth = Math.max(...rows.map((row) => textWidth(row.value, size)));
+  const valueEnd = SAMPLE + 7 + valueWidth;
   const nameStart = valueEnd + 7;
   const widths = columns.map(
     (column) => nameStart + Math.max(...column.map((row) => textWidth(row.name, size))) + APART,
@@ -82,7 +82,7 @@ function candidates(cursorX: number, width: number, height: number, scales: Scal
     scales.bottom - height - 6,
     (scales.room.row + scales.bottom - height) / 2,
   ];
-  const lefts = [cursorX + OFF, cursorX - OFF - width];
+  const lefts = [...OFF.map((off) => cursorX + off), ...OFF.map((off) => cursorX - off - width)];
   return tops.flatMap((y) => lefts.map((x) => ({ x, y, width, height })));
 }
 

@@ -3,7 +3,7 @@ import type { CaseDocument, ConditionDocument, CurveDocument, StageDocument } fr
 import { parseQuantity } from "../../case/units.ts";
 import type { Dimension, UnitSystem } from "../../case/units.ts";
 import type { CaseResult } from "../../run/result.ts";
-import { duration, temperature } from "../controls/figures.ts";
+import { lasting, temperature } from "../controls/figures.ts";
 import { whereName } from "../controls/words.ts";
 
 export interface Knot {
@@ -169,8 +169,8 @@ function wordsOf(stage: StageDocument, length: number, system: UnitSystem): stri
   const around = aroundWords(stage, system);
   const comma = around === "" ? "" : `${around}, `;
   if (stage.until === undefined) {
-    const lasting = `for ${duration(length)}`;
-    return [`${around} ${lasting}`.trim(), lasting, ""];
+    const time = `for ${lasting(length)}`;
+    return [`${around} ${time}`.trim(), time, ""];
   }
   const limit = read(stage.until.reaches, "temperature");
   const reached = limit === undefined ? String(stage.until.reaches) : temperature(limit, system).text;

@@ -7,7 +7,7 @@ import { valueAt } from "./curves.ts";
 import type { StageBlock } from "./schedule.ts";
 
 /** Thin spaces read badly aloud. */
-export const plain = (text: string): string => text.replace(/[\u2009\u202f]/g, " ");
+export const plain = (text: string): string => text.replace(/[\u00a0\u2009\u202f]/g, " ");
 
 /** "Treatment: Furnace, 25 °C for 4 h; Still air, until ...." */
 export function treatmentWords(schedule: readonly StageBlock[]): string {
