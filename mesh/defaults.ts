@@ -8,6 +8,9 @@ const DEGREE = Math.PI / 180;
 /** Points nearer than this share of the part's size are one point; a vertex this near to a side lies on it. */
 export const JOIN_SHARE = 1e-8;
 
+/** Walls thinner than this share of the part's size cannot be meshed and are reported. */
+export const THINNEST_SHARE = 1e-6;
+
 /** More nodes than this are refused: working arrays of about 400 bytes a node must fit a browser tab. */
 export const MOST_NODES = 2_000_000;
 

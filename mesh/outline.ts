@@ -6,6 +6,7 @@
  */
 import { JOIN_SHARE } from "./defaults.ts";
 import {
+  arcExtremes,
   areaUnder,
   arcThrough,
   curveAt,
@@ -100,18 +101,6 @@ export function extentOf(regions: readonly OutlineRegion[]): { low: Point; high:
     if (arc) for (const place of arcExtremes(arc)) take(...place);
   }
   return { low, high, size: Math.max(high[0] - low[0], high[1] - low[1]) };
-}
-
-function arcExtremes(arc: Arc): Point[] {
-  const places: Point[] = [];
-  for (let k = 0; k < 4; k++) {
-    const angle = (k * Math.PI) / 2;
-    let ahead = (angle - arc.start) * Math.sign(arc.turn);
-    ahead -= 2 * Math.PI * Math.floor(ahead / (2 * Math.PI));
-    if (ahead >= Math.abs(arc.turn)) continue;
-    places.push([arc.x + arc.radius * Math.cos(angle), arc.y + arc.radius * Math.sin(angle)]);
-  }
-  return places;
 }
 
 /** The request's outline as a planar graph. Faults are not looked for here: see `findOutlineFaults`. */

@@ -48,6 +48,19 @@ export function partOfArc(arc: Arc, t0: number, t1: number): Arc {
   return { ...arc, start: arc.start + t0 * arc.turn, turn: (t1 - t0) * arc.turn };
 }
 
+/** Places of an arc with the least or greatest x or y, its ends aside. */
+export function arcExtremes(arc: Arc): Point[] {
+  const places: Point[] = [];
+  for (let k = 0; k < 4; k++) {
+    const angle = (k * Math.PI) / 2;
+    let ahead = (angle - arc.start) * Math.sign(arc.turn);
+    ahead -= 2 * Math.PI * Math.floor(ahead / (2 * Math.PI));
+    if (ahead >= Math.abs(arc.turn)) continue;
+    places.push([arc.x + arc.radius * Math.cos(angle), arc.y + arc.radius * Math.sin(angle)]);
+  }
+  return places;
+}
+
 /** A line or arc between two places; the ends are exact, what lies between follows from the share t in 0..1. */
 export interface Curve {
   readonly ax: number;
