@@ -63,8 +63,8 @@ describe("faults of one loop", () => {
     const bulged = regionOf([
       [1, 0],
       [3, 0],
-      [3, 0.8],
-      [1, 0.8, 2, -0.1],
+      [3, 0.6, 2, -0.05],
+      [1, 0.6],
     ]);
     const faults = findOutlineFaults([bulged]);
     expect(faults.map(({ code }) => code)).toEqual(["crossing", "crossing"]);
