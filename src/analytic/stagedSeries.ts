@@ -5,7 +5,7 @@
  *
  * What is cut off: modes beyond those carried, which matter only in the first instants after a change. There a uniform
  * start uses the response with its own bound (response.ts); later stages are bridged from their start to the first
- * instant that their modes carry, and the number of readings so bridged is returned.
+ * instant that their modes carry, and the share of the stage that was bridged is returned.
  */
 import type { Curve } from "../case/types.ts";
 import { isConstant } from "../heat/curve.ts";
@@ -69,8 +69,8 @@ export interface SeriesHistory {
   readonly edge: Float64Array;
   /** first term of each direction alone, at the core */
   readonly oneTermCore: Float64Array;
-  /** readings in the first instants of a later stage that were bridged instead of summed */
-  readonly bridged: number;
+  /** longest share of a later stage, from its start, whose readings were bridged instead of summed; 0 when none was */
+  readonly bridgedShare: number;
 }
 
 const PLACES = ["core", "mean", "surface", "edge", "oneTermCore"] as const;
@@ -92,7 +92,7 @@ export function seriesHistory(
   if (stages.length === 0) throw new RangeError("No stage to follow");
   const columns = PLACES.map(() => new Float64Array(times.length));
   let state: ModalState | null = null;
-  let [began, next, bridged] = [0, 0, 0];
+  let [began, next, bridgedShare] = [0, 0, 0];
   stages.forEach((stage, s) => {
     const end = s === stages.length - 1 ? Infinity : began + stage.duration;
     const delays = times.filter((time, i) => i >= next && time <= end).map((time) => time - began);
@@ -102,17 +102,17 @@ export function seriesHistory(
       PLACES.forEach((place, i) => (columns[i]![next] = reading[place]));
       next++;
     }
-    bridged += run.bridged;
+    bridgedShare = Math.max(bridgedShare, run.bridged / Math.max(stage.duration, delays.at(-1) ?? 0));
     state = run.last();
     began += stage.duration;
   });
   const [core, mean, surface, edge, oneTermCore] = columns;
-  return { core: core!, mean: mean!, surface: surface!, edge: edge!, oneTermCore: oneTermCore!, bridged };
+  return { core: core!, mean: mean!, surface: surface!, edge: edge!, oneTermCore: oneTermCore!, bridgedShare };
 }
 
 /** One stage on its way: the field at the start of each straight piece of its surroundings. */
 class StageRun {
-  /** readings bridged so far */
+  /** [s] up to where readings were bridged; 0 when none was */
   bridged = 0;
   private readonly runs: readonly StraightRun[];
   private readonly pieces: readonly Piece[];
@@ -142,7 +142,7 @@ class StageRun {
   read(time: number): Reading {
     if (time >= this.resolved) return this.sum(time);
     if (this.entry === null) return uniformReading(this.body, this.stage, this.pieces[0]!, time);
-    this.bridged++;
+    this.bridged = this.resolved;
     return bridge(this.entry, this.sum(this.resolved), time / this.resolved);
   }
 

@@ -125,7 +125,7 @@ describe("series through stages", () => {
         expect(got.surface[i]).toBeCloseTo(at(1), 6);
         expect(got.edge[i]).toBe(got.surface[i]);
       });
-      expect(got.bridged).toBe(0);
+      expect(got.bridgedShare).toBe(0);
     }
   });
 
@@ -192,7 +192,7 @@ describe("series through stages", () => {
         expect(Math.abs(got.mean[i]! - march.mean[i]!), `mean ${i}`).toBeLessThan(0.05);
         expect(Math.abs(got.surface[i]! - march.surface[i]!), `surface ${i}`).toBeLessThan(0.3);
       });
-      expect(got.bridged).toBe(0);
+      expect(got.bridgedShare).toBe(0);
     },
   );
 
@@ -244,7 +244,8 @@ describe("series through stages", () => {
       { duration: 500, films: [900, 900], ambient: 20 },
     ];
     const got = seriesHistory(finite, stages, Float64Array.of(500, 500.001, 500.01, 500.1, 505));
-    expect(got.bridged).toBe(3);
+    expect(got.bridgedShare).toBeGreaterThan(0.0002);
+    expect(got.bridgedShare).toBeLessThan(0.002);
     for (let i = 1; i < 5; i++) {
       expect(got.edge[i]).toBeLessThan(got.edge[i - 1]!);
       expect(got.mean[i]).toBeLessThan(got.mean[i - 1]!);
