@@ -50,6 +50,8 @@ interface SideSamples {
 const SAMPLES = 400;
 const MOST_SAMPLES = 200;
 const LEAST_SAMPLES = 5;
+/** An arc's chords stay off their arc by this share of the gap to the next side at most. */
+const SAGITTA_SHARE = 0.25;
 
 export function sizeSources(outline: Outline): SizeSources {
   const largest = LARGEST_SHARE * outline.size;
@@ -57,7 +59,7 @@ export function sizeSources(outline: Outline): SizeSources {
   const wedges = wedgesOf(outline);
   const list: number[] = [];
   const samples = sampleSizes(outline, chords, largest, list);
-  refineAtCorners(samples, wedges);
+  addCorners(outline, samples, wedges, list);
   addPoints(outline, largest, list);
   const sideStart = list.length / SOURCE_STRIDE;
   for (const side of samples) addStretches(side, list);
@@ -119,15 +121,19 @@ function samplePiece(
     new WallMiddle(list, (2 * piece.length) / n),
   ];
   const bend = piece.arc ? piece.arc.radius : Infinity;
+  let nearest = Infinity;
   for (let i = 0; i <= n; i++) {
     curveAt(piece, i / n, p);
     curveTangent(piece, i / n, t);
     let h = Math.min(largest, SIDE_MOST * piece.length, ARC_SHARE * bend);
     for (const hand of [1, -1]) {
-      if ((hand > 0 ? piece.left : piece.right) < 0) continue;
+      const isMaterial = (hand > 0 ? piece.left : piece.right) >= 0;
+      if (!isMaterial && !piece.arc) continue;
       const nx = -t[1]! * hand;
       const ny = t[0]! * hand;
       const wall = wallThickness(p[0]!, p[1]!, nx, ny, chords, skip);
+      nearest = Math.min(nearest, wall);
+      if (!isMaterial) continue;
       h = Math.min(h, wall / WALL_TRIANGLES);
       middles[hand > 0 ? 0 : 1]!.add(
         p[0]! + (nx * wall) / 2,
@@ -140,7 +146,9 @@ function samplePiece(
     y.push(p[1]!);
     size.push(h);
   }
-  return { piece, x, y, size, limit: Math.min(ARC_MOST * bend, SIDE_MOST * piece.length) };
+  // A chord must not reach across to what lies opposite: its sagitta is c^2 / (8 R).
+  const byGap = piece.arc ? Math.sqrt(8 * bend * SAGITTA_SHARE * nearest) : Infinity;
+  return { piece, x, y, size, limit: Math.min(ARC_MOST * bend, SIDE_MOST * piece.length, byGap) };
 }
 
 /** Joins the middles of a wall, sample after sample, into stretches of sources. */
@@ -170,16 +178,25 @@ class WallMiddle {
   }
 }
 
-/** The field is steep at a re-entrant corner: the samples that lie at one are made smaller. */
-function refineAtCorners(samples: readonly SideSamples[], wedges: readonly Wedge[][]): void {
+/**
+ * The field is steep at a re-entrant corner: a source of its own, so that the size grows alike on both of its sides.
+ */
+function addCorners(
+  outline: Outline,
+  samples: readonly SideSamples[],
+  wedges: readonly Wedge[][],
+  list: number[],
+): void {
+  const least = new Float64Array(outline.x.length).fill(Infinity);
   for (const { piece, size } of samples) {
-    for (const [vertex, i] of [
-      [piece.a, 0],
-      [piece.b, size.length - 1],
-    ] as const) {
-      if (wedges[vertex]!.some((w) => w.angle > REENTRANT_ANGLE)) size[i]! *= REENTRANT_SHARE;
-    }
+    least[piece.a] = Math.min(least[piece.a]!, size[0]!);
+    least[piece.b] = Math.min(least[piece.b]!, size[size.length - 1]!);
   }
+  wedges.forEach((at, v) => {
+    if (!at.some((w) => w.angle > REENTRANT_ANGLE)) return;
+    const size = REENTRANT_SHARE * least[v]!;
+    list.push(outline.x[v]!, outline.y[v]!, 0, 0, size, size, Infinity);
+  });
 }
 
 /** A requested point near a side or another point needs triangles that fit between. */
