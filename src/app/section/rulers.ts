@@ -5,7 +5,7 @@ import { fromShown, shownUnit, toShown } from "../../case/units.ts";
 import type { UnitSystem } from "../../case/units.ts";
 import type { Place } from "../../editor/arcs.ts";
 import { digits } from "../controls/figures.ts";
-import { fromScreen, toScreen } from "./view.ts";
+import { toScreen } from "./view.ts";
 import type { View } from "./view.ts";
 
 export interface RulerRoom {
@@ -80,15 +80,8 @@ export function rulers(
   const acrossTicks = ticksBetween(left, width, view.x, perUnit, 1);
   const upTicks = ticksBetween(bottom, 0, view.y, perUnit, -1);
   const figure = (value: number, mirrored: boolean): string => {
-    const shown = mirrored ? Math.abs(value) : value;
-    return digits(
-      shown,
-      Number.isInteger(shown)
-        ? 0
-        : Math.min(3, Math.max(1, Math.ceil(-Math.log10(perUnit ? FIGURE_ROOM / perUnit : 1)) + 1)),
-    )
-      .replace(/(\.\d*?)0+$/, "$1")
-      .replace(/\.$/, "");
+    const shown = Number((mirrored ? Math.abs(value) : value).toPrecision(6));
+    return String(shown).replace("-", "\u2212");
   };
   return svg`
     <rect class="scale-ground" x="0" y=${bottom} width=${width} height=${foot}></rect>
@@ -134,5 +127,3 @@ function pointers(view: View, { height, left, foot }: RulerRoom, [r, z]: Place):
 export function coordinate(metres: number, system: UnitSystem): string {
   return digits(toShown(metres, "length", system), system === "si" ? 1 : 3);
 }
-
-export { fromScreen };

@@ -1,0 +1,141 @@
+/** The mend card: a fault of the document at its place, what is wrong and what can be done at once. */
+import { LitElement, css, html, nothing } from "lit";
+import type { TemplateResult } from "lit";
+import { customElement, property } from "lit/decorators.js";
+import { pathSteps } from "../../case/path.ts";
+import type { CaseDocument, CaseProblem } from "../../case/types.ts";
+import { FEWEST_VERTICES, removeVertex } from "../../editor/outline.ts";
+import type { LoopIndex } from "../../editor/outline.ts";
+import { send, sendEdit } from "../events.ts";
+import { icon } from "../icons.ts";
+import { shared } from "../styles/shared.ts";
+
+/** The point or side that a path of the document leads to; null where it leads elsewhere. */
+export function placeOfPath(path: string): LoopIndex | null {
+  const steps = pathSteps(path);
+  if (steps[0] !== "part" || steps[1] !== "regions" || typeof steps[2] !== "number") return null;
+  const [, , region, where, number, index] = steps;
+  if (where === "outline" && typeof number === "number") return { region, loop: 0, index: number };
+  if (where === "holes" && typeof number === "number" && typeof index === "number")
+    return { region, loop: number + 1, index };
+  return null;
+}
+
+@customElement("corelag-mend")
+export class CorelagMend extends LitElement {
+  static override styles = [
+    shared,
+    css`
+      .card {
+        background: var(--bad-ground);
+        --sheet: var(--bad-ground);
+        padding: var(--s-2) var(--s-3) var(--s-3) var(--s-4);
+        clip-path: polygon(
+          var(--chamfer) 0,
+          100% 0,
+          100% 100%,
+          var(--chamfer) 100%,
+          0 calc(100% - var(--chamfer)),
+          0 var(--chamfer)
+        );
+        max-height: var(--tag-room, 420px);
+        overflow: auto;
+      }
+      h2 {
+        color: var(--bad);
+        font-weight: var(--w-firm);
+        font-size: var(--t-ask);
+        display: flex;
+        gap: var(--s-2);
+        line-height: 1.25;
+        margin-bottom: var(--s-1);
+      }
+      .acts {
+        display: flex;
+        flex-wrap: wrap;
+        gap: var(--s-2);
+        margin: var(--s-2) 0;
+      }
+      .act {
+        padding: 0 var(--s-2);
+      }
+      .act:not(.main) {
+        background: none;
+      }
+      @media (forced-colors: active) {
+        .card {
+          border: 1px solid CanvasText;
+        }
+      }
+    `,
+  ];
+
+  @property({ attribute: false }) document: CaseDocument | null = null;
+  @property({ attribute: false }) problems: readonly CaseProblem[] = [];
+  /** what undo would take back; null when there is nothing */
+  @property({ attribute: false }) undoLabel: string | null = null;
+
+  protected override render(): TemplateResult | typeof nothing {
+    const [first] = this.problems;
+    if (!first || !this.document) return nothing;
+    const others = this.problems.length - 1;
+    return html`<aside class="card" role="alert" aria-label="Fault">
+      <h2>${icon("bad")}<span>${headline(first)}</span></h2>
+      <p>${rest(first)}</p>
+      <p class="acts">${this.acts(first)}</p>
+      <p class="aside">
+        ${first.mend}${others > 0 ? html` <b>${others === 1 ? "One more fault" : `${others} more faults`}</b> after this.` : nothing}
+      </p>
+    </aside>`;
+  }
+
+  private acts(problem: CaseProblem): TemplateResult {
+    const place = placeOfPath(problem.path);
+    const loop = place && loopLength(this.document!, place);
+    const take = (at: LoopIndex) => (): void =>
+      sendEdit(this, `taking out point ${at.index + 1}`, (draft) => removeVertex(draft, at));
+    const show = (at: LoopIndex) => (): void => send(this, "corelag-select", { kind: "vertex", ...at });
+    return html`
+      ${
+        this.undoLabel === null
+          ? nothing
+          : html`<button class="act main" @click=${() => send(this, "corelag-do", { kind: "undo" })}>
+              ${putBackWords(this.undoLabel)}
+            </button>`
+      }
+      ${
+        place && loop && loop > FEWEST_VERTICES
+          ? html`<button class="act" @click=${take(place)}>Take point ${place.index + 1} out</button>`
+          : nothing
+      }
+      ${place ? html`<button class="act" @click=${show(place)}>Type point ${place.index + 1}</button>` : nothing}
+    `;
+  }
+}
+
+function loopLength(document: CaseDocument, { region, loop }: LoopIndex): number | undefined {
+  const found = document.part.regions[region];
+  return loop === 0 ? found?.outline.length : found?.holes?.[loop - 1]?.length;
+}
+
+/** "Put point 3 back" for a move, "Undo: ..." for the rest. */
+function putBackWords(label: string): string {
+  const moved = /^move of (?<what>.+)$/.exec(label)?.groups?.["what"];
+  return moved ? `Put ${moved} back` : `Undo: ${label}`;
+}
+
+/** The first sentence of the message, without its full stop. */
+function headline({ message }: CaseProblem): string {
+  return /^.*?[.!?](?=\s|$)/su.exec(message)?.[0].replace(/\.$/, "") ?? message;
+}
+
+function rest({ message }: CaseProblem): string {
+  const first = /^.*?[.!?](?=\s|$)/su.exec(message)?.[0] ?? message;
+  return message.slice(first.length).trim();
+}
+
+declare global {
+  interface HTMLElementTagNameMap {
+    "corelag-mend": CorelagMend;
+  }
+}

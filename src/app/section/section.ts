@@ -1,0 +1,448 @@
+/**
+ * The section: field, outline and everything that can be taken on it, between two graduated scales. It draws what it
+ * is given and sends what the hand does; it works out nothing of the physics.
+ */
+import { LitElement, html, nothing, svg } from "lit";
+import type { PropertyValues, TemplateResult } from "lit";
+import { customElement, property, query, state } from "lit/decorators.js";
+import type { MaterialLibrary } from "../../case/library.ts";
+import type { CaseDocument, CaseProblem } from "../../case/types.ts";
+import type { UnitSystem } from "../../case/units.ts";
+import { NOTHING, sameSelection } from "../../editor/selection.ts";
+import type { Selection } from "../../editor/selection.ts";
+import type { Profile } from "../../profile/types.ts";
+import type { CaseResult } from "../../run/result.ts";
+import { parseHex, readStops } from "../colours.ts";
+import type { Rgb } from "../colours.ts";
+import { send } from "../events.ts";
+import { icon } from "../icons.ts";
+import type { Shown, Status } from "../state.ts";
+import { drawing, shared } from "../styles/shared.ts";
+import { captionSentence } from "./caption.ts";
+import { isothermsLayer } from "./isothermsLayer.ts";
+import { BoardHand } from "./boardHand.ts";
+import type { Mode } from "./boardHand.ts";
+import { outlineUnder, sidesLayer } from "./outlineLayer.ts";
+import type { OutlineLayer } from "./outlineLayer.ts";
+import { faultsOf } from "./faults.ts";
+import { Painter, PLAIN_WORDS } from "./painter.ts";
+import { readoutOf, sceneSentence } from "./readout.ts";
+import { rulers } from "./rulers.ts";
+import { inkFor, SceneKeeper, sceneValueAt } from "./scene.ts";
+import type { Scene } from "./scene.ts";
+import { sectionStyle } from "./sectionStyle.ts";
+import { readSheet, sheetPlaces } from "./sheet.ts";
+import type { Sheet } from "./sheet.ts";
+import { balloonsLayer, faultsLayer, pointsLayer, probesLayer, sizesLayer } from "./thingsLayer.ts";
+import type { ThingsLayer } from "./thingsLayer.ts";
+import { placeOfSelection, threadPath } from "./thread.ts";
+import { between, boundsOf, fitView, prefersLying } from "./view.ts";
+import type { Bounds, Frame, View } from "./view.ts";
+import "./facts.ts";
+import "./mend.ts";
+import "./tag.ts";
+import type { CorelagTag } from "./tag.ts";
+
+/** From this width of the board on, type and marks go one step up [px]. */
+const BIG_BOARD = 1000;
+
+@customElement("corelag-section")
+export class CorelagSection extends LitElement {
+  static override styles = [shared, drawing, sectionStyle];
+
+  @property({ attribute: false }) document: CaseDocument | null = null;
+  /** the document before the running gesture */
+  @property({ attribute: false }) earlier: CaseDocument | null = null;
+  @property({ attribute: false }) result: CaseResult | null = null;
+  @property({ attribute: false }) profile: Profile | null = null;
+  @property({ attribute: false }) profileEarlier: Profile | null = null;
+  @property({ attribute: false }) problems: readonly CaseProblem[] = [];
+  @property() status: Status = "empty";
+  @property({ type: Boolean }) dragging = false;
+  @property({ type: Number }) cursor = 0;
+  @property({ attribute: false }) selection: Selection = NOTHING;
+  @property({ attribute: false }) focusedAnswer: number | null = null;
+  @property({ attribute: false }) shown: Shown = { by: "temperature" };
+  @property() units: UnitSystem = "si";
+  @property() theme: "light" | "dark" = "light";
+  @property({ attribute: false }) undoLabel: string | null = null;
+  @property({ attribute: false }) library: MaterialLibrary = {};
+
+  @state() view: View = { lying: true, scale: 500, x: 100, y: 100 };
+  /** which way the part was turned by hand; null: as its shape asks */
+  @state() private turned: boolean | null = null;
+  @state() private step: number | null = null;
+  @state() mode: Mode = "take";
+  /** pointer on the board [px] */
+  @state() pointer: readonly [number, number] | null = null;
+  @query(".board") board!: HTMLElement;
+  @query("svg.lines") lines!: SVGSVGElement;
+  @query("corelag-tag") tag!: CorelagTag | null;
+
+  sheet: Sheet = { loops: [], probes: [] };
+  bounds: Bounds = boundsOf([]);
+  readonly hand = new BoardHand(this);
+  readonly #keeper = new SceneKeeper();
+  #painter: Painter | undefined;
+  #stops: readonly Rgb[] = [];
+  #size = { width: 0, height: 0 };
+  #observer = new ResizeObserver(() => this.#resized());
+  #moving = 0;
+  #fitted: unknown = null;
+
+  override disconnectedCallback(): void {
+    super.disconnectedCallback();
+    this.#observer.disconnect();
+    this.#painter?.close();
+    this.#painter = undefined;
+    cancelAnimationFrame(this.#moving);
+  }
+
+  protected override firstUpdated(): void {
+    this.#stops = readStops();
+    this.#painter = new Painter(this.board, () => this.requestUpdate());
+    void this.#painter.useThree();
+    this.#observer.observe(this.board);
+    this.#resized();
+  }
+
+  override connectedCallback(): void {
+    super.connectedCallback();
+    if (this.hasUpdated) this.firstUpdated();
+  }
+
+  protected override willUpdate(changed: PropertyValues<this>): void {
+    if (changed.has("document")) {
+      this.sheet = readSheet(this.document);
+      const fresh = boundsOf(sheetPlaces(this.sheet));
+      if (!this.dragging || this.#fitted === null) this.bounds = fresh;
+    }
+    if (changed.has("shown")) this.step = null;
+    if (changed.has("dragging") && !this.dragging) this.bounds = boundsOf(sheetPlaces(this.sheet));
+  }
+
+  protected override updated(changed: PropertyValues<this>): void {
+    if (changed.has("document") && this.document && !changed.get("document")) this.fit(false);
+    else if (
+      (changed.has("selection") ||
+        changed.has("dragging") ||
+        changed.has("document") ||
+        changed.has("problems")) &&
+      !this.dragging
+    )
+      this.#refit();
+    this.#paint();
+  }
+
+  // --- view -----------------------------------------------------------------------------------------------------------
+
+  get lying(): boolean {
+    return this.turned ?? prefersLying(this.bounds);
+  }
+
+  #resized(): void {
+    const box = this.board.getBoundingClientRect();
+    if (box.width === this.#size.width && box.height === this.#size.height) return;
+    this.#size = { width: box.width, height: box.height };
+    this.board.style.setProperty(
+      "--tag-room",
+      `${Math.max(120, box.height - this.#length("--zrule") - 34)}px`,
+    );
+    this.fit(false);
+    this.requestUpdate();
+  }
+
+  #length(token: string): number {
+    return Number.parseFloat(getComputedStyle(this).getPropertyValue(token)) || 0;
+  }
+
+  get size(): { width: number; height: number; left: number; foot: number } {
+    return { ...this.#size, left: this.#length("--scale"), foot: this.#length("--zrule") };
+  }
+
+  /** Room that the part may take: inside the scales, clear of the tag, with room for its sizes. */
+  #frame(lying: boolean): Frame {
+    const { width, height, left, foot } = this.size;
+    const narrow = window.innerWidth <= 760;
+    const card = this.problems.length > 0 ? 26 : 0;
+    const beside =
+      narrow || (this.selection.kind === "none" && card === 0) ? 0 : this.#length("--tag") + card + 10;
+    const sizes = width > BIG_BOARD ? 40 : 34;
+    const pads = lying
+      ? { left: 62, right: 58, top: 34, bottom: 2 * (sizes - 8) + 34 }
+      : { left: 2 * (sizes - 6) + 20, right: 40, top: sizes + 20, bottom: sizes + 44 };
+    return {
+      left: left + pads.left,
+      right: width - beside - pads.right,
+      top: pads.top,
+      bottom: height - foot - pads.bottom,
+    };
+  }
+
+  /** Fits the part into the free room, in a short move where the eye should follow. */
+  fit(softly = true): void {
+    const target = fitView(this.bounds, this.#frame(this.lying), this.lying);
+    const from = this.view;
+    cancelAnimationFrame(this.#moving);
+    const lasts = softly && from.lying === target.lying ? settleTime(this) : 0;
+    this.#fitted = this.#fitKey();
+    if (lasts === 0) {
+      this.view = target;
+      return;
+    }
+    const began = performance.now();
+    const move = (now: number): void => {
+      const share = Math.min(1, (now - began) / lasts);
+      this.view = share < 1 ? between(from, target, 1 - (1 - share) ** 3) : target;
+      if (share < 1) this.#moving = requestAnimationFrame(move);
+    };
+    this.#moving = requestAnimationFrame(move);
+  }
+
+  #fitKey(): string {
+    return JSON.stringify([
+      this.selection.kind === "none",
+      this.problems.length > 0,
+      this.bounds,
+      this.turned,
+    ]);
+  }
+
+  /** After an edit or a selection: fits again when what has to be seen or the free room has changed. */
+  #refit(): void {
+    if (this.document && this.#size.width > 0 && this.#fitted !== this.#fitKey()) this.fit();
+  }
+
+  turn(lying: boolean): void {
+    this.turned = lying === prefersLying(this.bounds) ? null : lying;
+    this.fit(false);
+  }
+
+  /** Moves the view by hand: it stays until the next fit. */
+  setView(view: View): void {
+    cancelAnimationFrame(this.#moving);
+    this.view = view;
+  }
+
+  // --- drawing --------------------------------------------------------------------------------------------------------
+
+  get scene(): Scene | null {
+    const { result, cursor, shown, step } = this;
+    return result ? this.#keeper.scene({ result, cursor, shown, step }) : null;
+  }
+
+  get #faint(): boolean {
+    return this.status === "waiting" || this.status === "failed";
+  }
+
+  #paint(): void {
+    const { scene } = this;
+    const { width, height } = this.#size;
+    if (!this.#painter || width === 0) return;
+    if (!scene) return this.#painter.clear();
+    this.#painter.draw({
+      mesh: scene.mesh,
+      values: scene.values,
+      range: scene.range,
+      stops: this.#stops,
+      view: this.view,
+      sheet: parseHex(getComputedStyle(this).getPropertyValue("--sheet").trim()),
+      veil: Number.parseFloat(getComputedStyle(this).getPropertyValue("--mirror-veil")) || 0.5,
+      ghost: this.#faint,
+      width,
+      height,
+      pixelRatio: Math.min(2, window.devicePixelRatio || 1),
+    });
+  }
+
+  protected override render(): TemplateResult {
+    const { document, scene } = this;
+    return html`
+      <div class="caption">${this.#captionLine(scene)}<span class="space"></span>${this.#tools()}</div>
+      <div
+        class="board ${this.mode === "take" ? "" : "mode"} ${this.dragging ? "dragging" : ""}"
+        @pointerdown=${this.hand.down}
+        @pointermove=${this.hand.move}
+        @pointerup=${this.hand.up}
+        @pointercancel=${this.hand.cancel}
+        @pointerleave=${() => (this.pointer = null)}
+        @wheel=${{ handleEvent: this.hand.wheel, passive: false }}
+        @keydown=${this.hand.key}
+        @focusin=${this.hand.focused}
+      >
+        <svg
+          class="lines"
+          role="group"
+          aria-roledescription="section drawing"
+          aria-label=${this.#spokenName()}
+        >
+          ${document ? this.#drawing(document, scene) : nothing}
+        </svg>
+        <corelag-facts
+          .document=${document}
+          .profile=${this.profile}
+          .units=${this.units}
+          .library=${this.library}
+        ></corelag-facts>
+        ${this.#card(scene)}${readoutOf(this, scene)}
+        ${scene && !this.#faint ? html`<p class="heard">${sceneSentence(this, scene)}</p>` : nothing}
+      </div>
+    `;
+  }
+
+  #drawing(document: CaseDocument, scene: Scene | null): TemplateResult {
+    const { width, height, left, foot } = this.size;
+    const { faults, sides } = faultsOf(this.problems, this.sheet);
+    const outline: OutlineLayer = {
+      document,
+      sheet: this.sheet,
+      ghost: this.earlier ? readSheet(this.earlier) : null,
+      view: this.view,
+      bounds: this.bounds,
+      units: this.units,
+      selection: this.selection,
+      stage: this.stageNow,
+      faulty: sides,
+    };
+    const field = this.#faint ? null : scene;
+    const things: ThingsLayer = {
+      ...outline,
+      answers: field ? (this.result?.answers ?? []) : [],
+      focusedAnswer: this.focusedAnswer,
+      valueAt: ([r, z]) => (field ? sceneValueAt(field, r, z) : Number.NaN),
+      inkAt: ([r, z]) => (field ? inkFor(this.#stops, field.range, sceneValueAt(field, r, z)) : "var(--ink)"),
+      faults,
+      big: width > BIG_BOARD,
+    };
+    const held = this.dragging ? placeOfSelection(this.sheet, this.selection) : null;
+    return svg`
+      ${rulers(this.view, { width, height, left, foot }, this.units, held)}
+      ${field ? isothermsLayer(field, this.view, this.bounds, this.sheet, this.#stops, this.shown, this.units, things.big) : nothing}
+      ${outlineUnder(outline)}${sizesLayer(things)}${sidesLayer(outline)}
+      ${field ? probesLayer(things) : probesLayer({ ...things, answers: [] })}
+      ${balloonsLayer(things)}${threadPath(this, faults)}${pointsLayer(things)}${faultsLayer(things)}
+    ` as unknown as TemplateResult;
+  }
+
+  /** Number of the stage at the time cursor. */
+  get stageNow(): number {
+    const found = this.result?.stages.findIndex((stage) => this.cursor < stage.ended) ?? 0;
+    return found >= 0 ? found : Math.max(0, (this.document?.stages.length ?? 1) - 1);
+  }
+
+  #spokenName(): string {
+    const points = this.sheet.loops.reduce((sum, loop) => sum + loop.vertices.length, 0);
+    const sides = this.sheet.loops.reduce(
+      (sum, loop) => sum + loop.sides.filter((side) => !side.onAxis).length,
+      0,
+    );
+    const name = this.document?.part.regions.map((region) => region.name).join(" and ") ?? "part";
+    return `Section of the ${name}, ${this.lying ? "upper" : "right"} half editable. ${points} points, ${sides} sides, ${this.sheet.probes.length} probes.`;
+  }
+
+  #card(scene: Scene | null): TemplateResult | typeof nothing {
+    if (this.problems.length > 0 && !this.dragging)
+      return html`<corelag-mend
+        .document=${this.document}
+        .problems=${this.problems}
+        .undoLabel=${this.undoLabel}
+      ></corelag-mend>`;
+    if (this.selection.kind === "none") return nothing;
+    const place = placeOfSelection(this.sheet, this.selection);
+    return html`<corelag-tag
+      .document=${this.document}
+      .earlier=${this.earlier}
+      .selection=${this.selection}
+      .units=${this.units}
+      .stageNow=${this.stageNow}
+      .amounts=${amountsOf(this.profile)}
+      .amountsBefore=${amountsOf(this.profileEarlier)}
+      .temperature=${scene && place && this.shown.by === "temperature" ? sceneValueAt(scene, ...place) : Number.NaN}
+      .library=${this.library}
+    ></corelag-tag>`;
+  }
+
+  // --- caption --------------------------------------------------------------------------------------------------------
+
+  #captionLine(scene: Scene | null): TemplateResult {
+    if (this.mode !== "take")
+      return html`<p class="says">${MODE_WORDS[this.mode]} <span class="aside">Esc leaves it.</span></p>`;
+    return captionSentence({
+      host: this,
+      result: this.result,
+      cursor: this.cursor,
+      shown: this.shown,
+      units: this.units,
+      step: scene?.step ?? null,
+      setStep: (step) => (this.step = step),
+      remark: PLAIN_WORDS[this.#painter?.reason ?? ""],
+    });
+  }
+
+  #tools(): TemplateResult {
+    const tool = (
+      mode: Exclude<Mode, "take">,
+      name: "point" | "arc" | "probe",
+      label: string,
+    ): TemplateResult =>
+      html`<button
+        class="tool"
+        title=${label}
+        aria-label=${label}
+        aria-pressed=${this.mode === mode}
+        @click=${(event: MouseEvent) => this.hand.tool(mode, event.detail === 0)}
+      >
+        ${icon(name)}
+      </button>`;
+    const turn = (lying: boolean, name: "lie" | "stand", label: string): TemplateResult =>
+      html`<button
+        class="tool"
+        title=${label}
+        aria-label=${label}
+        aria-pressed=${this.lying === lying}
+        @click=${() => this.turn(lying)}
+      >
+        ${icon(name)}
+      </button>`;
+    return html`
+      <span class="group draw" role="group" aria-label="Draw">
+        ${tool("point", "point", "Insert a point")}${tool("bend", "arc", "Bend a side into an arc")}${tool("probe", "probe", "Set a probe")}
+      </span>
+      <span class="group" role="group" aria-label="View">
+        ${turn(true, "lie", "Lie down")}${turn(false, "stand", "Stand up")}
+        <button
+          class="tool"
+          title="Fit to the sheet"
+          aria-label="Fit to the sheet"
+          @click=${() => this.fit()}
+        >
+          ${icon("fit")}
+        </button>
+      </span>
+    `;
+  }
+
+  select(selection: Selection): void {
+    if (!sameSelection(selection, this.selection)) send(this, "corelag-select", selection);
+  }
+}
+
+const MODE_WORDS: Readonly<Record<Exclude<Mode, "take">, string>> = {
+  point: "Click the outline where the new point should stand.",
+  bend: "Click the side that should become an arc.",
+  probe: "Click the place of the probe.",
+};
+
+const amountsOf = (profile: Profile | null) =>
+  profile ? { mass: profile.mass, length: profile.characteristicLength } : null;
+
+/** ms of a settling move, from the tokens; 0 with reduced motion. */
+function settleTime(element: Element): number {
+  return Number.parseFloat(getComputedStyle(element).getPropertyValue("--m-settle")) || 0;
+}
+
+declare global {
+  interface HTMLElementTagNameMap {
+    "corelag-section": CorelagSection;
+  }
+}

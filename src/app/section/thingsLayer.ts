@@ -1,0 +1,156 @@
+/** What stands on the drawing: sizes, probes, balloons of the answers, points, rings of faults. */
+import { nothing, svg } from "lit";
+import type { SVGTemplateResult } from "lit";
+import type { UnitSystem } from "../../case/units.ts";
+import { shownUnit, toShown } from "../../case/units.ts";
+import type { Place } from "../../editor/arcs.ts";
+import { sameSelection } from "../../editor/selection.ts";
+import type { Selection } from "../../editor/selection.ts";
+import type { Answer } from "../../run/result.ts";
+import { temperature } from "../controls/figures.ts";
+import { dimensionRoom, dimensionsOf, drawDimension } from "./dimensions.ts";
+import type { Dimension } from "./dimensions.ts";
+import { coordinate } from "./rulers.ts";
+import type { Sheet, SheetLoop } from "./sheet.ts";
+import { vertexWords } from "./spoken.ts";
+import { toScreen } from "./view.ts";
+import type { Bounds, Spot, View } from "./view.ts";
+
+export interface ThingsLayer {
+  readonly sheet: Sheet;
+  readonly view: View;
+  readonly bounds: Bounds;
+  readonly units: UnitSystem;
+  readonly selection: Selection;
+  readonly answers: readonly Answer[];
+  readonly focusedAnswer: number | null;
+  /** degC at a place of the part, NaN where unknown */
+  readonly valueAt: (place: Place) => number;
+  /** colour of lines on the field there */
+  readonly inkAt: (place: Place) => string;
+  /** places of faults */
+  readonly faults: readonly Place[];
+  readonly big: boolean;
+}
+
+/** px below which a size does not find room between its heads */
+const SIZE_ROOM = 34;
+
+export function sizesLayer(layer: ThingsLayer): SVGTemplateResult[] {
+  const room = dimensionRoom(layer.view, layer.bounds, layer.big ? 26 : 19);
+  return dimensionsOf(layer.sheet).map((dimension) => {
+    const drawn = drawDimension(dimension, layer.view, room);
+    const [x, y] = drawn.middle;
+    const text = `${dimension.kind === "diameter" ? "Ø " : ""}${sizeText(dimension.value, layer.units)}`;
+    const { region, loop, index } = dimension.point;
+    const fits = drawn.room > SIZE_ROOM || drawn.upright;
+    return svg`
+      <path class="dim" d=${drawn.path}></path><path class="dim-head" d=${drawn.heads}></path>
+      ${
+        fits
+          ? svg`<text class="size" x=${x} y=${y} dy="4" text-anchor="middle" transform=${drawn.upright ? `rotate(-90 ${x} ${y})` : ""}
+              data-grip="size" data-region=${region} data-loop=${loop} data-index=${index}>${text}<title>${sizeTitle(dimension)}</title></text>`
+          : nothing
+      }
+    `;
+  });
+}
+
+const sizeTitle = (dimension: Dimension): string => `Set by point ${dimension.point.index + 1}`;
+
+function sizeText(metres: number, units: UnitSystem): string {
+  return String(Number(toShown(metres, "length", units).toPrecision(5)));
+}
+
+export function probesLayer(layer: ThingsLayer): SVGTemplateResult[] {
+  return layer.sheet.probes.map((probe, index) => {
+    if (!Number.isFinite(probe.at[0] + probe.at[1])) return svg``;
+    const [x, y] = toScreen(layer.view, ...probe.at);
+    const value = layer.valueAt(probe.at);
+    const outside = !Number.isFinite(value) && layer.answers.length > 0;
+    const ink = outside ? "var(--ink-2)" : layer.inkAt(probe.at);
+    const selected = sameSelection(layer.selection, { kind: "probe", index });
+    const says = outside ? "outside" : Number.isFinite(value) ? temperature(value, layer.units).text : "";
+    const [dx, dy] = probe.at[0] < 1e-6 ? [10, -7] : [11, 15];
+    return svg`<g class="probe ${selected ? "on" : ""} ${outside ? "outside" : ""}" role="button" tabindex="0" data-grip="probe" data-index=${index}
+      aria-label="Probe ${probe.name}, r ${coordinate(probe.at[0], layer.units)}, z ${coordinate(probe.at[1], layer.units)} ${shownUnit("length", layer.units)}, ${says}"
+      aria-pressed=${selected} style="--on-field: ${ink}">
+      <circle class="hit" cx=${x} cy=${y} r="12"></circle>
+      <circle class="ring" cx=${x} cy=${y} r="3.5"></circle>
+      <path class="cross" d="M${x - 8} ${y}h16M${x} ${y - 8}v16"></path>
+      <text class="probe-name" x=${x + dx} y=${y + dy}>${probe.name}<tspan class="reads"> ${says}</tspan></text>
+    </g>`;
+  });
+}
+
+/** Balloons at the places that decide the answers; several at one place stand side by side. */
+export function balloonsLayer(layer: ThingsLayer): SVGTemplateResult[] {
+  const radius = layer.big ? 10 : 8.5;
+  const rise = layer.big ? 30 : 22;
+  const taken: Spot[] = [];
+  return layer.answers.map((answer, index) => {
+    if (answer.place === null) return svg``;
+    const [x, y] = toScreen(layer.view, ...answer.place);
+    let bx = x;
+    while (taken.some(([tx, ty]) => Math.hypot(tx - bx, ty - (y - rise)) < 2 * radius + 2))
+      bx += 2 * radius + 4;
+    taken.push([bx, y - rise]);
+    const ink = layer.inkAt(answer.place);
+    const lit = layer.focusedAnswer === index ? "lit" : "";
+    return svg`<g class="balloon" aria-hidden="true">
+      <path d="M${x} ${y}L${bx} ${y - rise + radius}" stroke=${ink} stroke-width="1.25"></path>
+      <circle cx=${x} cy=${y} r="2.75" fill=${ink}></circle>
+      <circle class="ball ${lit}" cx=${bx} cy=${y - rise} r=${radius}></circle>
+      <text class="ball-n ${lit}" x=${bx} y=${y - rise + 4.3}>${index + 1}</text>
+    </g>`;
+  });
+}
+
+export function pointsLayer(layer: ThingsLayer): SVGTemplateResult[] {
+  return layer.sheet.loops.flatMap((loop) => [
+    ...loop.vertices.map((_, index) => pointOf(layer, loop, index)),
+    ...loop.sides.filter((side) => side.curved).map((side) => bulgeOf(layer, loop, side.index)),
+  ]);
+}
+
+function pointOf(layer: ThingsLayer, loop: SheetLoop, index: number): SVGTemplateResult {
+  const { at } = loop.vertices[index]!;
+  if (!Number.isFinite(at[0] + at[1])) return svg``;
+  const [x, y] = toScreen(layer.view, ...at);
+  const selected = sameSelection(layer.selection, {
+    kind: "vertex",
+    region: loop.region,
+    loop: loop.loop,
+    index,
+  });
+  return svg`<g class="point ${selected ? "on" : ""}" role="button" tabindex="0" data-grip="vertex"
+    data-region=${loop.region} data-loop=${loop.loop} data-index=${index}
+    aria-label=${vertexWords(loop, index, layer.units)} aria-pressed=${selected}>
+    <circle class="hit" cx=${x} cy=${y} r="13"></circle>
+    ${selected ? svg`<circle class="halo" cx=${x} cy=${y} r="13"></circle>` : nothing}
+    <rect class="box" x=${x - 4} y=${y - 4} width="8" height="8"></rect>
+  </g>`;
+}
+
+/** The round grip in the middle of an arc: shown while the side or one of its ends is selected. */
+function bulgeOf(layer: ThingsLayer, loop: SheetLoop, index: number): SVGTemplateResult {
+  const { selection } = layer;
+  const shown =
+    selection.kind === "side" &&
+    selection.region === loop.region &&
+    selection.loop === loop.loop &&
+    selection.index === index;
+  const through = loop.vertices[index]!.through;
+  if (!shown || !through) return svg``;
+  const [x, y] = toScreen(layer.view, ...through);
+  return svg`<g class="bulge" data-grip="bulge" data-region=${loop.region} data-loop=${loop.loop} data-index=${index}>
+    <circle class="hit" cx=${x} cy=${y} r="13"></circle><circle class="box" cx=${x} cy=${y} r="4.5"></circle>
+  </g>`;
+}
+
+export function faultsLayer(layer: ThingsLayer): SVGTemplateResult[] {
+  return layer.faults.map(([r, z]) => {
+    const [x, y] = toScreen(layer.view, r, z);
+    return svg`<circle class="fault-ring" cx=${x} cy=${y} r="13"></circle>`;
+  });
+}
