@@ -26,7 +26,10 @@ export interface SeriesEstimate {
     readonly time: Float64Array;
     readonly core: Float64Array;
     readonly mean: Float64Array;
+    /** mean of the surface */
     readonly surface: Float64Array;
+    /** the point that follows the surroundings first: the edge of a finite cylinder; the surface where left out */
+    readonly edge?: Float64Array;
   };
   /** the first term alone, at the centre: what charts and hand calculations use */
   readonly oneTermCore: Float64Array;
@@ -41,6 +44,17 @@ export interface Estimates {
   readonly remarks: readonly string[];
 }
 
+/** What may be done with the quick estimate, in words; the headline leads with what to do. */
+export interface Verdict {
+  readonly tone: "good" | "care" | "bad";
+  readonly headline: string;
+  readonly detail: string;
+  /** largest error of the one-temperature estimate over all answers, as a share; null when nothing could be compared */
+  readonly worst: number | null;
+  /** film coefficient up to which the estimate stays within the tolerance [W/(m2 K)], once it has been sought */
+  readonly filmLimit?: number;
+}
+
 /** One estimate beside one answer of the field. */
 export interface Comparison {
   /** estimate minus field, in the unit of the answer */
@@ -49,6 +63,8 @@ export interface Comparison {
   readonly kelvin: number | null;
   /** estimate minus field in time [s], negative: the estimate is early; null where that has no meaning */
   readonly seconds: number | null;
+  /** size of the error as a share: of the answer, or of the span of temperatures where the answer is one */
+  readonly share?: number;
   /** an estimate that runs ahead of the part (early, or too small a spread) errs on the unsafe side */
   readonly side: "safe" | "unsafe" | "agrees";
 }

@@ -1,0 +1,136 @@
+/** A curve of an estimate, read between its instants by cubics that keep their sense, stage by stage. */
+
+/** One stage on the time of the case [s]. */
+export interface StageWindow {
+  readonly name: string;
+  readonly began: number;
+  readonly ended: number;
+}
+
+export type Going = "up" | "down";
+
+export interface EstimateCurve {
+  readonly time: Float64Array;
+  readonly values: Float64Array;
+  /** slopes to the right and to the left of each instant: they differ where a stage ends */
+  readonly after: Float64Array;
+  readonly before: Float64Array;
+}
+
+/**
+ * Lays cubics through the instants. Slopes come from the parabola through three instants, limited so that the cubic
+ * never leaves the range of its two ends (Fritsch and Carlson, SIAM J. Numer. Anal. 17 (1980) 238, from memory); a
+ * stage boundary is a bend and is left one.
+ */
+export function curveThrough(
+  time: Float64Array,
+  values: Float64Array,
+  stages: readonly StageWindow[],
+): EstimateCurve {
+  const bends = new Set(stages.map((stage) => stage.ended));
+  const [after, before] = [new Float64Array(time.length), new Float64Array(time.length)];
+  const secant = (i: number) => (values[i + 1]! - values[i]!) / (time[i + 1]! - time[i]!);
+  for (let i = 0; i < time.length; i++) {
+    const isFirst = i === 0 || bends.has(time[i]!);
+    const isLast = i === time.length - 1 || bends.has(time[i]!);
+    if (!isFirst && !isLast) after[i] = before[i] = innerSlope(time, i, secant(i - 1), secant(i));
+    if (isFirst && i + 1 < time.length) after[i] = secant(i);
+    if (isLast && i > 0) before[i] = secant(i - 1);
+  }
+  return { time, values, after, before };
+}
+
+function innerSlope(time: Float64Array, i: number, left: number, right: number): number {
+  if (left * right <= 0) return 0;
+  const [a, b] = [time[i]! - time[i - 1]!, time[i + 1]! - time[i]!];
+  const slope = (left * b + right * a) / (a + b);
+  return Math.sign(slope) * Math.min(Math.abs(slope), 3 * Math.abs(left), 3 * Math.abs(right));
+}
+
+/** Value at an instant; held beyond the ends. */
+export function readCurve(curve: EstimateCurve, time: number): number {
+  const i = intervalOf(curve.time, time);
+  const [t0, t1] = [curve.time[i]!, curve.time[i + 1]!];
+  if (time <= t0) return curve.values[i]!;
+  if (time >= t1) return curve.values[i + 1]!;
+  const h = t1 - t0;
+  const x = (time - t0) / h;
+  const [y0, y1] = [curve.values[i]!, curve.values[i + 1]!];
+  const bend = (1 - x) * (1 - x) * x * h * curve.after[i]! - x * x * (1 - x) * h * curve.before[i + 1]!;
+  return y0 + (y1 - y0) * x * x * (3 - 2 * x) + bend;
+}
+
+/** Slope at an instant [per s]. */
+export function slopeOfCurve(curve: EstimateCurve, time: number): number {
+  const i = intervalOf(curve.time, time);
+  const [t0, t1] = [curve.time[i]!, curve.time[i + 1]!];
+  const h = t1 - t0;
+  const x = Math.min(1, Math.max(0, (time - t0) / h));
+  const rise = (curve.values[i + 1]! - curve.values[i]!) / h;
+  return (
+    6 * rise * x * (1 - x) + curve.after[i]! * (1 - x) * (1 - 3 * x) + curve.before[i + 1]! * x * (3 * x - 2)
+  );
+}
+
+/** First instant not before `from` at which the level is reached; null when it never is. */
+export function firstReached(curve: EstimateCurve, level: number, going: Going, from = 0): number | null {
+  const there = (value: number) => (going === "down" ? value <= level : value >= level);
+  if (there(readCurve(curve, from))) return from;
+  let low = from;
+  for (const [i, time] of curve.time.entries()) {
+    if (time <= from) continue;
+    if (there(curve.values[i]!)) return passing(curve, there, low, time);
+    low = time;
+  }
+  return null;
+}
+
+/** Seconds spent at or beyond the level. */
+export function timeReached(curve: EstimateCurve, level: number, going: Going): number {
+  const there = (value: number) => (going === "down" ? value <= level : value >= level);
+  let total = 0;
+  for (let i = 1; i < curve.time.length; i++) {
+    const [from, to] = [curve.time[i - 1]!, curve.time[i]!];
+    const [a, b] = [there(curve.values[i - 1]!), there(curve.values[i]!)];
+    if (a && b) total += to - from;
+    if (!a && b) total += to - passing(curve, there, from, to);
+    if (a && !b) total += passing(curve, (value) => !there(value), from, to) - from;
+  }
+  return total;
+}
+
+/** Integral of a function of the temperature over the whole run, by Simpson's rule between instants. */
+export function integrateOver(curve: EstimateCurve, f: (temperature: number) => number): number {
+  let total = 0;
+  for (let i = 1; i < curve.time.length; i++) {
+    const [from, to] = [curve.time[i - 1]!, curve.time[i]!];
+    const middle = f(readCurve(curve, (from + to) / 2));
+    total += ((to - from) * (f(curve.values[i - 1]!) + 4 * middle + f(curve.values[i]!))) / 6;
+  }
+  return total;
+}
+
+const HALVINGS = 60;
+
+/** By halving: between two instants the cubic runs one way, so there is one passing. */
+function passing(curve: EstimateCurve, there: (value: number) => boolean, from: number, to: number): number {
+  let [low, high] = [from, to];
+  for (let i = 0; i < HALVINGS && high > low; i++) {
+    const middle = (low + high) / 2;
+    if (middle === low || middle === high) break;
+    if (there(readCurve(curve, middle))) high = middle;
+    else low = middle;
+  }
+  return high;
+}
+
+/** i with time[i] <= t < time[i + 1], the first or last interval beyond the ends. */
+function intervalOf(times: Float64Array, time: number): number {
+  let [low, high] = [0, times.length - 1];
+  while (high - low > 1) {
+    const middle = (low + high) >> 1;
+    if (times[middle]! <= time) low = middle;
+    else high = middle;
+  }
+  return low;
+}
