@@ -10,7 +10,9 @@ import { bandOrdering } from "./bandOrdering.ts";
 import { conjugateGradients, conjugateGradientsWork } from "./conjugateGradients.ts";
 import { RELATIVE_RESIDUAL } from "./defaults.ts";
 import { NotPositiveDefiniteError } from "./errors.ts";
+import { graphCoordinates } from "./graphCoordinates.ts";
 import { incompleteCholesky } from "./incompleteCholesky.ts";
+import { kernelsAvailable } from "./kernels/instance.ts";
 import {
   gatherValues,
   numberingFrom,
@@ -21,6 +23,7 @@ import {
   type RenumberedPattern,
 } from "./numbering.ts";
 import { multiply, type SparsityPattern } from "./pattern.ts";
+import { choleskySolver } from "./sparseCholesky.ts";
 
 export type SolverKind = "cholesky" | "conjugate-gradients";
 
@@ -123,8 +126,9 @@ export function makeSolver(
   coordinates: Float64Array | undefined,
   options: SolverOptions = {},
 ): SparseSolver {
-  void coordinates;
-  return conjugateGradientsSolver(pattern, options);
+  const kind = options.kind ?? (kernelsAvailable() ? "cholesky" : "conjugate-gradients");
+  if (kind === "conjugate-gradients") return conjugateGradientsSolver(pattern, options);
+  return choleskySolver(pattern, coordinates ?? graphCoordinates(pattern));
 }
 
 /**

@@ -1,0 +1,334 @@
+// Numeric phase: multifrontal Cholesky (Duff and Reid 1983; Liu 1992) and the triangular solves.
+//
+// A factor is one block of memory: n reciprocals of its diagonal, then the panels of all supernodes, row-major, columns
+// of the supernode first, then its rows below.
+import {
+  columns,
+  first,
+  firstChild,
+  lowerStart,
+  nextSibling,
+  panelPlace,
+  panelStart,
+  placeInParent,
+  rowStart,
+  rows,
+  rowsStart,
+  size,
+  stack,
+  supernodes,
+  updateStart,
+} from "./analysis";
+import {
+  addProduct,
+  dotProduct,
+  factorPanel,
+  failedColumn,
+  solveLower,
+  solveLowerTransposed,
+  subtractProducts,
+  sumOf,
+} from "./dense";
+import { allocateReals, getInt, getReal, intAt, realAt, setInt, setReal } from "./memory";
+
+/** A new, empty factor. */
+export function newFactor(): usize {
+  return allocateReals(size + 8 + getInt(panelStart, supernodes));
+}
+@inline function panelsOf(factor: usize): usize {
+  return (realAt(factor, size) + 63) & ~63;
+}
+
+/** first column that failed, in inner numbers */
+export let failedUnknown: i32 = -1;
+
+/**
+ * Numeric factorization.
+ *
+ * @param values  of the matrix, on the inner pattern
+ * @param least   share of its diagonal entry below which a pivot counts as zero
+ * @returns whether the matrix is positive definite; if not, see failedUnknown and the values in dense.ts
+ */
+export function factorize(factor: usize, values: usize, least: f64): bool {
+  const panels = panelsOf(factor);
+  memory.fill(panels, 0, <usize>getInt(panelStart, supernodes) << 3);
+  scatterValues(factor, panels, values);
+  let top = 0;
+  for (let s = 0; s < supernodes; s++) {
+    const begin = getInt(first, s);
+    const width = getInt(first, s + 1) - begin;
+    const count = getInt(rowsStart, s + 1) - getInt(rowsStart, s);
+    const panel = realAt(panels, getInt(panelStart, s));
+    const update = realAt(stack, top);
+    const bytes = <usize>(count * count) << 3;
+    let base = top;
+    memory.fill(update, 0, bytes);
+    for (let c = getInt(firstChild, s); c >= 0; c = getInt(nextSibling, c)) {
+      base = min(base, getInt(updateStart, c));
+      addChild(c, panel, width, update, count);
+    }
+    if (!factorPanel(panel, width + count, width, realAt(factor, begin), least)) {
+      failedUnknown = begin + failedColumn;
+      return false;
+    }
+    if (count > 0) {
+      const stride = <usize>width << 3;
+      const below = panel + stride * width;
+      subtractProducts(update, <usize>count << 3, below, count, below, count, stride, width, true);
+      // The updates of the children are used up: move this one down to where they began.
+      if (base < top) memory.copy(realAt(stack, base), update, bytes);
+    }
+    setInt(updateStart, s, base);
+    top = base + count * count;
+  }
+  return true;
+}
+
+/** Values of the lower triangle to their places in the panels; the diagonal also to the reciprocals, as a yardstick. */
+function scatterValues(factor: usize, panels: usize, values: usize): void {
+  for (let i = 0; i < size; i++) {
+    const begin = getInt(lowerStart, i);
+    const count = getInt(lowerStart, i + 1) - begin;
+    const from = realAt(values, getInt(rowStart, i));
+    const places = intAt(panelPlace, begin);
+    for (let k = 0; k < count; k++) setReal(panels, getInt(places, k), getReal(from, k));
+    setReal(factor, i, getReal(from, count - 1));
+  }
+}
+
+/** Add the update matrix of child c (lower triangle, row-major) into the front of its parent. */
+function addChild(c: i32, panel: usize, width: i32, update: usize, count: i32): void {
+  const start = getInt(rowsStart, c);
+  const childCount = getInt(rowsStart, c + 1) - start;
+  const places = intAt(placeInParent, start);
+  let inPanel = 0;
+  while (inPanel < childCount && getInt(places, inPanel) < width) inPanel++;
+  let row = realAt(stack, getInt(updateStart, c));
+  const rowBytes = <usize>childCount << 3;
+  const panelBytes = <usize>width << 3;
+  for (let a = 0; a < childCount; a++, row += rowBytes) {
+    const place = getInt(places, a);
+    const target = panel + panelBytes * place;
+    const stop = min(a + 1, inPanel);
+    for (let b = 0; b < stop; b++) {
+      const at = realAt(target, getInt(places, b));
+      store<f64>(at, load<f64>(at) + getReal(row, b));
+    }
+    if (a < inPanel) continue;
+    // columns of the update matrix are counted behind those of the panel
+    const other = update + ((<usize>count * (place - width)) << 3) - panelBytes;
+    for (let b = inPanel; b <= a; b++) {
+      const at = realAt(other, getInt(places, b));
+      store<f64>(at, load<f64>(at) + getReal(row, b));
+    }
+  }
+}
+
+// --- solves ----------------------------------------------------------------------------------------------------------
+
+/** x := A^-1 x, in inner numbers. */
+export function solve(factor: usize, x: usize): void {
+  const panels = panelsOf(factor);
+  for (let s = 0; s < supernodes; s++) forward(s, factor, panels, x);
+  for (let s = supernodes - 1; s >= 0; s--) backward(s, factor, panels, x);
+}
+
+/** Offset of the unknown that row list entry `r` names. */
+@inline function unknownAt(x: usize, r: usize): usize {
+  return x + (<usize>load<i32>(r) << 3);
+}
+@inline function subtractFrom(at: usize, value: f64): void {
+  store<f64>(at, load<f64>(at) - value);
+}
+
+function forward(s: i32, factor: usize, panels: usize, x: usize): void {
+  const begin = getInt(first, s);
+  const width = getInt(first, s + 1) - begin;
+  const own = realAt(x, begin);
+  let row = realAt(panels, getInt(panelStart, s));
+  let r = intAt(rows, getInt(rowsStart, s));
+  const end = intAt(rows, getInt(rowsStart, s + 1));
+  if (width == 1) {
+    const value = load<f64>(own) * getReal(factor, begin);
+    store<f64>(own, value);
+    row += 8;
+    for (; r < end; r += 4, row += 8) subtractFrom(unknownAt(x, r), load<f64>(row) * value);
+    return;
+  }
+  solveLower(row, width, realAt(factor, begin), own);
+  const stride = <usize>width << 3;
+  row += stride * width;
+  if (width == 2) {
+    const v = v128.load(own);
+    for (; r < end; r += 4, row += 16) subtractFrom(unknownAt(x, r), sumOf(f64x2.mul(v128.load(row), v)));
+    return;
+  }
+  if (width == 4) {
+    const v = v128.load(own);
+    const w = v128.load(own, 16);
+    for (; r < end; r += 4, row += 32)
+      subtractFrom(unknownAt(x, r), sumOf(addProduct(f64x2.mul(v128.load(row), v), v128.load(row, 16), w)));
+    return;
+  }
+  const even = stride & ~15;
+  const odd = (width & 1) != 0;
+  const last = odd ? getReal(own, width - 1) : 0;
+  for (; r + 12 < end; r += 16) {
+    const row1 = row + stride;
+    const row2 = row1 + stride;
+    const row3 = row2 + stride;
+    let s0 = f64x2.splat(0);
+    let s1 = s0;
+    let s2 = s0;
+    let s3 = s0;
+    for (let k: usize = 0; k < even; k += 16) {
+      const v = v128.load(own + k);
+      s0 = addProduct(s0, v128.load(row + k), v);
+      s1 = addProduct(s1, v128.load(row1 + k), v);
+      s2 = addProduct(s2, v128.load(row2 + k), v);
+      s3 = addProduct(s3, v128.load(row3 + k), v);
+    }
+    let t0 = sumOf(s0);
+    let t1 = sumOf(s1);
+    let t2 = sumOf(s2);
+    let t3 = sumOf(s3);
+    if (odd) {
+      t0 += load<f64>(row + even) * last;
+      t1 += load<f64>(row1 + even) * last;
+      t2 += load<f64>(row2 + even) * last;
+      t3 += load<f64>(row3 + even) * last;
+    }
+    subtractFrom(unknownAt(x, r), t0);
+    subtractFrom(unknownAt(x, r + 4), t1);
+    subtractFrom(unknownAt(x, r + 8), t2);
+    subtractFrom(unknownAt(x, r + 12), t3);
+    row = row3 + stride;
+  }
+  for (; r < end; r += 4, row += stride) subtractFrom(unknownAt(x, r), dotProduct(row, own, width));
+}
+
+function backward(s: i32, factor: usize, panels: usize, x: usize): void {
+  const begin = getInt(first, s);
+  const width = getInt(first, s + 1) - begin;
+  const own = realAt(x, begin);
+  const triangle = realAt(panels, getInt(panelStart, s));
+  const from = intAt(rows, getInt(rowsStart, s));
+  const end = intAt(rows, getInt(rowsStart, s + 1));
+  const stride = <usize>width << 3;
+  const below = triangle + stride * width;
+  if (width == 1) {
+    let value = load<f64>(own);
+    for (let r = from, row = below; r < end; r += 4, row += 8) value -= load<f64>(row) * load<f64>(unknownAt(x, r));
+    store<f64>(own, value * getReal(factor, begin));
+    return;
+  }
+  // Few columns: keep them in registers and run down the rows. Many: take four rows at a time across all columns.
+  if (width > 8) subtractManyColumns(from, end, below, stride, own, x, width);
+  else subtractFewColumns(from, end, below, stride, own, x, width);
+  solveLowerTransposed(triangle, width, realAt(factor, begin), own);
+}
+
+function subtractFewColumns(
+  from: usize,
+  end: usize,
+  below: usize,
+  stride: usize,
+  own: usize,
+  x: usize,
+  width: i32,
+): void {
+  let k = 0;
+  for (; k + 3 < width; k += 4) {
+    const at = realAt(own, k);
+    let a = v128.load(at);
+    let b = v128.load(at, 16);
+    for (let r = from, row = realAt(below, k); r < end; r += 4, row += stride) {
+      const value = v128.load64_splat(unknownAt(x, r));
+      a = f64x2.sub(a, f64x2.mul(v128.load(row), value));
+      b = f64x2.sub(b, f64x2.mul(v128.load(row, 16), value));
+    }
+    v128.store(at, a);
+    v128.store(at, b, 16);
+  }
+  if (k + 1 < width) {
+    const at = realAt(own, k);
+    let a = v128.load(at);
+    for (let r = from, row = realAt(below, k); r < end; r += 4, row += stride)
+      a = f64x2.sub(a, f64x2.mul(v128.load(row), v128.load64_splat(unknownAt(x, r))));
+    v128.store(at, a);
+    k += 2;
+  }
+  if (k < width) {
+    let value = getReal(own, k);
+    for (let r = from, row = realAt(below, k); r < end; r += 4, row += stride)
+      value -= load<f64>(row) * load<f64>(unknownAt(x, r));
+    setReal(own, k, value);
+  }
+}
+
+function subtractManyColumns(
+  from: usize,
+  end: usize,
+  below: usize,
+  stride: usize,
+  own: usize,
+  x: usize,
+  width: i32,
+): void {
+  const even = stride & ~15;
+  const odd = (width & 1) != 0;
+  let r = from;
+  let row = below;
+  for (; r + 12 < end; r += 16) {
+    const v0 = v128.load64_splat(unknownAt(x, r));
+    const v1 = v128.load64_splat(unknownAt(x, r + 4));
+    const v2 = v128.load64_splat(unknownAt(x, r + 8));
+    const v3 = v128.load64_splat(unknownAt(x, r + 12));
+    const row1 = row + stride;
+    const row2 = row1 + stride;
+    const row3 = row2 + stride;
+    for (let k: usize = 0; k < even; k += 16) {
+      let a = f64x2.mul(v128.load(row + k), v0);
+      let b = f64x2.mul(v128.load(row1 + k), v1);
+      a = addProduct(a, v128.load(row2 + k), v2);
+      b = addProduct(b, v128.load(row3 + k), v3);
+      v128.store(own + k, f64x2.sub(v128.load(own + k), f64x2.add(a, b)));
+    }
+    if (odd)
+      subtractFrom(
+        own + even,
+        load<f64>(row + even) * f64x2.extract_lane(v0, 0) +
+          load<f64>(row1 + even) * f64x2.extract_lane(v1, 0) +
+          load<f64>(row2 + even) * f64x2.extract_lane(v2, 0) +
+          load<f64>(row3 + even) * f64x2.extract_lane(v3, 0),
+      );
+    row = row3 + stride;
+  }
+  for (; r < end; r += 4, row += stride) {
+    const v = v128.load64_splat(unknownAt(x, r));
+    for (let k: usize = 0; k < even; k += 16)
+      v128.store(own + k, f64x2.sub(v128.load(own + k), f64x2.mul(v128.load(row + k), v)));
+    if (odd) subtractFrom(own + even, load<f64>(row + even) * f64x2.extract_lane(v, 0));
+  }
+}
+
+// --- products --------------------------------------------------------------------------------------------------------
+
+/** y = A x on the inner pattern */
+export function multiply(values: usize, x: usize, y: usize): void {
+  let q = 0;
+  for (let i = 0; i < size; i++) {
+    const end = getInt(rowStart, i + 1);
+    let even: f64 = 0;
+    let odd: f64 = 0;
+    for (; q + 1 < end; q += 2) {
+      even += getReal(values, q) * getReal(x, getInt(columns, q));
+      odd += getReal(values, q + 1) * getReal(x, getInt(columns, q + 1));
+    }
+    if (q < end) {
+      even += getReal(values, q) * getReal(x, getInt(columns, q));
+      q++;
+    }
+    setReal(y, i, even + odd);
+  }
+}

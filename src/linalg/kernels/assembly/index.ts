@@ -1,0 +1,16 @@
+// Exports of the module: one instance, one analysis. All offsets are into its memory.
+export { allocateInts, allocateReals, mark, reset } from "./memory";
+export {
+  analyze,
+  columns,
+  outerOf,
+  rowStart,
+  size,
+  source,
+  supernodes,
+  workX,
+  workY,
+} from "./analysis";
+export { factorEntries, factorWork } from "./supernodes";
+export { failedDiagonal, failedPivot, subtractProducts, factorPanel } from "./dense";
+export { failedUnknown, factorize, multiply, newFactor, solve } from "./factor";
