@@ -69,7 +69,7 @@ interface Checked {
 export function checkDocument(
   document: unknown,
   library: MaterialLibrary,
-): Checked | { problems: CaseProblem[] } {
+): Checked | { readonly problems: readonly CaseProblem[] } {
   const reading = readCase(document, library);
   if ("problems" in reading) return reading;
   const input = reading.case;
@@ -172,7 +172,7 @@ export function systemOfCase(
   library: MaterialLibrary,
   unknowns: number,
   element: ElementOrder,
-): CaseSystem | { problems: CaseProblem[] } {
+): CaseSystem | { readonly problems: readonly CaseProblem[] } {
   const checked = checkDocument(document, library);
   if ("problems" in checked) return checked;
   const { input, profile } = checked;

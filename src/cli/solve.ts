@@ -5,7 +5,7 @@ import type { CaseResult } from "../run/result.ts";
 import { solveCase } from "../solveCase.ts";
 import type { RunContext, SolveOptions } from "../solveCase.ts";
 import { EXIT } from "./exit.ts";
-import { summaryText } from "./summary.ts";
+import { summaryText } from "../report/summary.ts";
 import { oneLine, progressLine, tell, tellProblems } from "./terminal.ts";
 import { writeOutputs } from "./outputs.ts";
 
