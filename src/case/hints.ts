@@ -1,13 +1,20 @@
 /** What is allowed but looks like a slip: said beside the answers, never a reason to refuse the case. */
 import { LIKELY } from "./defaults.ts";
+import type { MaterialLibrary } from "./library.ts";
 import { pathText } from "./path.ts";
 import type { PathStep } from "./path.ts";
 import type { Case, CaseProblem, Condition, Curve } from "./types.ts";
 import { formatNumber } from "./units.ts";
 
 /** Hints on a case that was read. */
-export function hintsOf(given: Case): CaseProblem[] {
-  return [...materialHints(given), ...extentHints(given), ...treatmentHints(given), ...questionHints(given)];
+export function hintsOf(given: Case, library: MaterialLibrary): CaseProblem[] {
+  return [
+    ...materialHints(given),
+    ...validityHints(given, library),
+    ...extentHints(given),
+    ...treatmentHints(given),
+    ...questionHints(given),
+  ];
 }
 
 function hint(code: string, path: readonly PathStep[], message: string, mend: string): CaseProblem {
@@ -65,6 +72,23 @@ function materialHints(given: Case): CaseProblem[] {
         `The heat capacity of "${name}"`,
         "J/(kg K)",
         at("heatCapacity"),
+      ),
+    ];
+  });
+}
+
+/** Regions that start far outside the temperatures for which their library values hold. */
+function validityHints(given: Case, library: MaterialLibrary): CaseProblem[] {
+  return given.regions.flatMap(({ material, start, name }) => {
+    const entry = library[given.materials[material]?.library ?? ""];
+    if (!entry || (start >= entry.valid[0] && start <= entry.valid[1])) return [];
+    const [from, to] = entry.valid;
+    return [
+      hint(
+        "outside-validity",
+        ["materials", material],
+        `"${name}" starts at ${formatNumber(start)} °C; the values of ${entry.title} hold from ${from} to ${to} °C.`,
+        "Take an entry over temperature, or give values for the temperatures of this case.",
       ),
     ];
   });

@@ -4,7 +4,7 @@
 const MENDS: Readonly<Record<string, string>> = {
   part: 'Give "part": { "regions": [ ... ] } with at least one region.',
   regions: 'Give "regions": a list with at least one { name, material, outline }.',
-  materials: 'Give "materials": for example { "steel": { "library": "carbon-steel-20c" } }.',
+  materials: 'Give "materials": for example { "steel": { "library": "carbon-steel" } }.',
   start: 'Give "start": the temperature of the part at the beginning, in °C, for example 20 or "70 degF".',
   stages: 'Give "stages": a list with at least one { lasts, ambient, sides }.',
   sides: 'Give "sides": for example { "*": { "film": 12 } } for every exposed side.',

@@ -62,7 +62,7 @@ function readDocument(document: unknown, library: MaterialLibrary): ReadCase {
   const filled = fillCase(parsed.data, library);
   const dark = radiationProblems(parsed.data, filled);
   if (dark.length > 0) return { problems: dark };
-  const hints = hintsOf(filled);
+  const hints = hintsOf(filled, library);
   const warnings = hints.map(({ message, mend }) => `${message} ${mend}`);
   return { case: filled, document: document as CaseDocument, hints, warnings };
 }

@@ -255,6 +255,10 @@ describe("hints", () => {
       expect.stringMatching(/emissivity-unused/),
     ]);
   });
+  test("a start outside the temperatures for which library values hold", () => {
+    const hints = hintsFor((d) => (d.materials["m"] = { library: "cast-iron-grey" }));
+    expect(hints).toEqual([expect.stringMatching(/outside-validity: "round" starts at 500 °C.*0 to 200 °C/)]);
+  });
   test("a reading after the end", () => {
     const hints = hintsFor((d) => (d.questions = [{ ask: "reading", where: "mean", at: "2 h" }]));
     expect(hints).toEqual([expect.stringMatching(/question-too-late/)]);
