@@ -30,14 +30,22 @@ export function curveThrough(
   const bends = new Set(stages.map((stage) => stage.ended));
   const [after, before] = [new Float64Array(time.length), new Float64Array(time.length)];
   const secant = (i: number) => (values[i + 1]! - values[i]!) / (time[i + 1]! - time[i]!);
+  const isEnd = (i: number) => i === 0 || i === time.length - 1 || bends.has(time[i]!);
+  for (let i = 0; i < time.length; i++)
+    if (!isEnd(i)) after[i] = before[i] = innerSlope(time, i, secant(i - 1), secant(i));
+  // ends and bends: the parabola that fits the next slope inward, or the chord between two of them
   for (let i = 0; i < time.length; i++) {
-    const isFirst = i === 0 || bends.has(time[i]!);
-    const isLast = i === time.length - 1 || bends.has(time[i]!);
-    if (!isFirst && !isLast) after[i] = before[i] = innerSlope(time, i, secant(i - 1), secant(i));
-    if (isFirst && i + 1 < time.length) after[i] = secant(i);
-    if (isLast && i > 0) before[i] = secant(i - 1);
+    if (!isEnd(i)) continue;
+    if (i + 1 < time.length) after[i] = endSlope(secant(i), isEnd(i + 1) ? null : after[i + 1]!);
+    if (i > 0) before[i] = endSlope(secant(i - 1), isEnd(i - 1) ? null : before[i - 1]!);
   }
   return { time, values, after, before };
+}
+
+/** Slope at the end of an interval of which the other end's is known. */
+function endSlope(chord: number, other: number | null): number {
+  const slope = other === null ? chord : 2 * chord - other;
+  return slope * chord <= 0 ? 0 : Math.sign(chord) * Math.min(Math.abs(slope), 3 * Math.abs(chord));
 }
 
 function innerSlope(time: Float64Array, i: number, left: number, right: number): number {

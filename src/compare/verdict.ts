@@ -32,7 +32,7 @@ export function verdict(answers: readonly ComparedAnswer[], tolerance: number = 
     return { tone: "care", headline, detail: seriesDetail(answers), worst: null };
   }
   const worst = Math.max(...misses.map((miss) => miss.share));
-  const out = misses.filter((miss) => miss.share > tolerance);
+  const out = misses.filter((miss) => miss.share > tolerance && miss.comparison.side !== "agrees");
   const unsafe = out.filter((miss) => miss.comparison.side === "unsafe");
   const detail = [`It was held beside ${counted(misses.length)}.`, seriesDetail(answers)]
     .filter(Boolean)
