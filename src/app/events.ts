@@ -29,9 +29,10 @@ export interface EventDetails {
 
 /** Whole-case deeds of the head and the keys. */
 export type Deed =
-  | { kind: "undo" | "redo" | "save" | "open" | "new" | "retry" }
+  | { kind: "undo" | "redo" | "save" | "open" | "new" | "retry" | "keys" }
   | { kind: "read"; text: string; name: string }
   | { kind: "begin"; document: CaseDocument }
+  /** a case that comes with the page; "" for the first */
   | { kind: "preset"; name: string };
 
 /** Sends one of the events above from an element. */
