@@ -86,6 +86,7 @@ export const blankStyle = css`
     color: var(--ink);
     font-weight: inherit;
     border-color: transparent;
+    margin-inline: -2px;
   }
   .quiet:hover {
     border-color: var(--hand);

@@ -88,8 +88,7 @@ export class CorelagBlank extends LitElement {
     }`;
   }
 
-  private classes(fault: EntryFault | null): string {
-    const shown = this.draft ?? this.value;
+  private classes(fault: EntryFault | null, shown: string): string {
     return [
       "blank",
       this.kind,
@@ -105,7 +104,7 @@ export class CorelagBlank extends LitElement {
   private entry(fault: EntryFault | null): TemplateResult {
     const shown = this.draft ?? this.value;
     return html`<span
-      class=${this.classes(fault)}
+      class=${this.classes(fault, shown)}
       @pointerdown=${this.pressed}
       @pointermove=${this.dragged}
       @pointerup=${this.released}
@@ -247,8 +246,9 @@ export class CorelagBlank extends LitElement {
   private choice(fault: EntryFault | null): TemplateResult {
     const chosen = this.options.find((option) => option.value === this.value);
     const shown = chosen?.label ?? this.value;
+    // no space inside the button: it would stand in the sentence
     return html`<button
-        class=${this.classes(fault)}
+        class=${this.classes(fault, shown)}
         type="button"
         role="combobox"
         aria-haspopup="listbox"

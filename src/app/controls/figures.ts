@@ -2,7 +2,8 @@
  * Figures as they stand on the page: value, thin space, unit; the doubt to one figure and the value to its last
  * digit; durations as "3 h 46 min". Pure text, no document object.
  */
-import { fromShown, shownUnit as unitText, toShown } from "../../case/units.ts";
+import { formatDoubted } from "../../case/format.ts";
+import { formatNumber, fromShown, shownUnit as unitText, toShown } from "../../case/units.ts";
 import type { Dimension, UnitSystem } from "../../case/units.ts";
 
 export { fromShown, toShown, unitText };
@@ -13,8 +14,6 @@ export const THIN = "\u00a0";
 /** Between groups of figures. */
 const GROUP = "\u202f";
 const MINUTE = 60;
-const HOUR = 3600;
-const DAY = 86_400;
 
 /** Decimals of a figure whose doubt is known: none above 1, else as far as the first figure of the doubt. */
 export function decimalsFor(doubt: number, most = 6): number {
@@ -38,13 +37,6 @@ export function digits(value: number, decimals: number): string {
   return sign + grouped + (part === undefined ? "" : `.${part}`);
 }
 
-/** A figure with about `significant` figures, for values whose doubt is not known. */
-export function roughly(value: number, significant = 4): string {
-  if (value === 0) return "0";
-  const size = Math.floor(Math.log10(Math.abs(value)));
-  return digits(value, Math.max(0, Math.min(6, significant - 1 - size)));
-}
-
 export interface Figure {
   /** value with its unit */
   readonly text: string;
@@ -52,28 +44,32 @@ export interface Figure {
   readonly doubt: string;
 }
 
+/** Smallest doubt that is told of a temperature [K] and of a time [s]: below, the inputs drown it by far. */
+const LEAST_KELVIN = 0.1;
+const LEAST_SECONDS = 0.1;
+
+/** Words of the core's formatting with a space that does not break. */
+const unbroken = (text: string): string =>
+  text.replace(/(\d)\u2009(?=\d{3}(?!\d))/g, `$1${GROUP}`).replaceAll("\u2009", THIN);
+
 /** A temperature [degC], with its doubt [K] when known. */
 export function temperature(degC: number, system: UnitSystem, doubt: number | null = null): Figure {
   const unit = unitText("temperature", system);
-  const shown = doubt === null ? null : toShown(doubt, "temperatureDifference", system);
-  const places = shown === null ? 0 : Math.min(1, decimalsFor(Math.max(shown, 0.05)));
-  return {
-    text: `${digits(toShown(degC, "temperature", system), places)}${THIN}${unit}`,
-    doubt: shown === null ? "" : doubtText(Math.max(shown, 0.1), unitText("temperatureDifference", system)),
-  };
+  const shown = toShown(degC, "temperature", system);
+  if (doubt === null) return { text: joined(unbroken(formatNumber(shown)), unit), doubt: "" };
+  const told = difference(0, system, Math.max(doubt, LEAST_KELVIN)).doubt;
+  const places = decimalsFor(toShown(Math.max(doubt, LEAST_KELVIN), "temperatureDifference", system));
+  return { text: joined(digits(shown, places), unit), doubt: told };
 }
 
 /** A difference of temperatures [K]. */
 export function difference(kelvin: number, system: UnitSystem, doubt: number | null = null): Figure {
-  const unit = unitText("temperatureDifference", system);
-  const value = toShown(kelvin, "temperatureDifference", system);
-  const shown = doubt === null ? null : toShown(doubt, "temperatureDifference", system);
-  const places =
-    shown === null ? (Math.abs(value) < 10 ? 1 : 0) : Math.min(2, decimalsFor(Math.max(shown, 0.05)));
-  return {
-    text: `${digits(value, places)}${THIN}${unit}`,
-    doubt: shown === null ? "" : doubtText(Math.max(shown, 0.1), unit),
-  };
+  return quantity(
+    kelvin,
+    "temperatureDifference",
+    system,
+    doubt === null ? null : Math.max(doubt, LEAST_KELVIN),
+  );
 }
 
 /** Any other quantity in its shown unit. */
@@ -83,20 +79,12 @@ export function quantity(
   system: UnitSystem,
   doubt: number | null = null,
 ): Figure {
-  const unit = unitText(dimension, system);
-  const value = toShown(si, dimension, system);
-  if (doubt === null) return { text: joined(roughly(value), unit), doubt: "" };
-  const shown = toShown(doubt, dimension, system);
-  return { text: joined(digits(value, decimalsFor(shown)), unit), doubt: doubtText(shown, unit) };
+  const { value, doubt: told } = formatDoubted(si, doubt, dimension, system);
+  return { text: unbroken(value), doubt: unbroken(told) };
 }
 
 export const joined = (figure: string, unit: string): string =>
   unit === "" ? figure : `${figure}${THIN}${unit}`;
-
-function doubtText(shown: number, unit: string): string {
-  const rounded = roundUp(shown);
-  return joined(`\u00b1${digits(rounded, decimalsFor(rounded))}`, unit);
-}
 
 // --- durations ------------------------------------------------------------------------------------------------------
 
@@ -105,11 +93,10 @@ const SHORT = 600;
 const LONG = 3600;
 
 /** Resolution [s] to which a time of this size is written: a minute from an hour on, else a second or finer. */
-export function resolutionOf(seconds: number, doubt: number | null): number {
+export function resolutionOf(seconds: number): number {
   const size = Math.abs(seconds);
   if (size >= LONG) return MINUTE;
-  if (size >= SHORT || doubt === null || !(doubt > 0)) return size < 100 ? 0.1 : 1;
-  return 10 ** Math.floor(Math.log10(Math.max(doubt, 0.1)) + 1e-9);
+  return size < SHORT ? 0.1 : 1;
 }
 
 /** How long something lasts, as people say it: "6 min" rather than "360 s". */
@@ -120,7 +107,7 @@ export function lasting(seconds: number): string {
 }
 
 /** "115.2 s", "49 min", "3 h 46 min", "2 d 4 h": to the resolution given [s]. */
-export function duration(seconds: number, resolution = resolutionOf(seconds, null)): string {
+export function duration(seconds: number, resolution = resolutionOf(seconds)): string {
   const sign = seconds < 0 ? "\u2212" : "";
   const size = Math.abs(seconds);
   if (size < LONG && resolution < MINUTE) return `${sign}${shortDuration(size, resolution)}`;
@@ -149,20 +136,10 @@ function longDuration(minutes: number): string {
 
 const pad = (value: number): string => String(value).padStart(2, "0");
 
-/** A time [s] with its doubt; the doubt is never stated below the digits that are shown. */
+/** A time [s] with its doubt; the doubt is never told finer than the digits that are shown. */
 export function time(seconds: number, doubt: number | null = null): Figure {
-  const resolution = resolutionOf(seconds, doubt);
-  if (doubt === null) return { text: duration(seconds, resolution), doubt: "" };
-  return {
-    text: duration(seconds, resolution),
-    doubt: `\u00b1${doubtDuration(Math.max(doubt, resolution))}`,
-  };
-}
-
-function doubtDuration(doubt: number): string {
-  if (doubt < MINUTE) return `${digits(roundUp(doubt), decimalsFor(roundUp(doubt), 1))}${THIN}s`;
-  if (doubt < HOUR) return `${roundUp(doubt / MINUTE - 1e-9)}${THIN}min`;
-  return doubt < DAY ? `${roundUp(doubt / HOUR)}${THIN}h` : `${roundUp(doubt / DAY)}${THIN}d`;
+  if (doubt === null) return { text: duration(seconds), doubt: "" };
+  return quantity(seconds, "time", "si", Math.max(doubt, LEAST_SECONDS));
 }
 
 // --- places ---------------------------------------------------------------------------------------------------------

@@ -58,7 +58,10 @@ export function valueAt(time: Float64Array, values: Float64Array, at: number): n
   return values[low]! + share * (values[high]! - values[low]!);
 }
 
-/** The first instant at which a curve passes a level in the given direction [s]; null when it never does. */
+/**
+ * The first instant at which a curve passes a level in the given direction [s]; null when it never does. A curve that
+ * is past the level from the start counts only once it has been on the other side.
+ */
 export function firstPassing(
   time: Float64Array,
   values: Float64Array,
@@ -66,12 +69,9 @@ export function firstPassing(
   going: "up" | "down",
 ): number | null {
   const sign = going === "up" ? 1 : -1;
-  for (let i = 0; i < time.length; i++) {
-    const now = sign * (values[i]! - level);
-    if (now < 0) continue;
-    if (i === 0) return time[0]!;
-    const before = sign * (values[i - 1]! - level);
-    return time[i - 1]! + (-before / (now - before)) * (time[i]! - time[i - 1]!);
+  for (let i = 1; i < time.length; i++) {
+    const [before, now] = [sign * (values[i - 1]! - level), sign * (values[i]! - level)];
+    if (before < 0 && now >= 0) return time[i - 1]! + (before / (before - now)) * (time[i]! - time[i - 1]!);
   }
   return null;
 }

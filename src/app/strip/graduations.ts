@@ -194,6 +194,14 @@ export function timeGraduations(end: number, width: number): TimeGraduations {
   return { word: unit.word, minor, middle, major, lines };
 }
 
+/** The rung whose long lines stand at least `room` px apart, for scales that count in mixed units. */
+export function timeRung(pixelsPerSecond: number, room: number): { major: number; minor: number } {
+  const [major, cuts] =
+    LADDER.find(([line]) => line * pixelsPerSecond >= room) ?? coarse(room / pixelsPerSecond, room);
+  const [minor] = cuts.find(([line]) => line * pixelsPerSecond >= LINE_ROOM) ?? [major];
+  return { major, minor };
+}
+
 /** Beyond the ladder at both ends: by 1, 2, 5 of a day or of a second. */
 function coarse(end: number, width: number): [number, Cuts] {
   const least = (end * FIGURE_ROOM) / width;

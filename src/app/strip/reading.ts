@@ -42,8 +42,19 @@ export function readingRows(curves: readonly Curve[], at: number, system: UnitSy
   }));
 }
 
-/** Where the reading goes; null when it fits nowhere beside the cursor. */
+/** Where the reading goes; where the sheet is too narrow for all of it, core, mean and skin alone; null when not even those fit. */
 export function placeReading(
+  rows: readonly ReadingRow[],
+  cursorX: number,
+  scales: Scales,
+  taken: readonly Box[],
+  crowd: Float64Array,
+): Reading | null {
+  const whole = tryReading(rows, cursorX, scales, taken, crowd);
+  return whole ?? tryReading(rows.slice(0, ROWS), cursorX, scales, [], crowd);
+}
+
+function tryReading(
   rows: readonly ReadingRow[],
   cursorX: number,
   scales: Scales,

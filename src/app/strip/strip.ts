@@ -192,7 +192,7 @@ export class CorelagStrip extends LitElement {
   }
 
   private chart(frame: Frame) {
-    const { scales, crowd } = frame;
+    const { scales } = frame;
     const on = this.events();
     const arrival =
       this.shown.by === "arrival" && this.result !== null
@@ -204,7 +204,6 @@ export class CorelagStrip extends LitElement {
     const names = view.reading === null ? taken : [...taken, view.reading.box];
     const old = this.status === "waiting" || this.status === "failed" || (this.stale && !this.dragging);
     const pale = this.stale || this.result?.quality === "preview";
-    void crowd;
     return svg`${drawGrounds(frame)}${drawGrid(frame)}${drawStages(frame, on)}
       <rect class="plot" x=${scales.room.left} y=${scales.room.row} width=${scales.room.width - scales.room.left}
         height=${scales.bottom - scales.room.row} @pointerdown=${(event: PointerEvent) => on.press(event, { kind: "cursor" })} />
