@@ -3,8 +3,11 @@
 /** Neglected terms of a series may add up to this much (of 1): far below what any reader of a curve can use. */
 export const SERIES_TOLERANCE = 1e-13;
 
-/** Terms a series may use: reaches down to a Fourier number of about 1e-6, 2 to 10 ms of root finding. */
-export const MAX_SERIES_TERMS = 2000;
+/**
+ * Terms a series may use: reaches down to a Fourier number of 2e-5. Earlier, the cylinder is answered by its skin layer
+ * too, to within 1e-5, which its bound says; a series there would take milliseconds of root finding for every film.
+ */
+export const MAX_SERIES_TERMS = 400;
 
 /**
  * Below this Fourier number slab and sphere are answered by their skin layer, which is exact there: what comes back
@@ -22,8 +25,8 @@ export const STAGED_TOLERANCE = 1e-9;
 export const FEWEST_MODES = 12;
 export const MOST_MODES = 400;
 
-/** At most in each direction of a finite cylinder, whose modes multiply: down to a Fourier number of 8e-5. */
-export const MOST_MODES_PER_DIRECTION = 160;
+/** At most in each direction of a finite cylinder, whose modes multiply: down to a Fourier number of 2.3e-4. */
+export const MOST_MODES_PER_DIRECTION = 96;
 
 /** At least, where the surroundings run: the lag behind a ramp falls only with the third power of the eigenvalue. */
 export const RAMP_MODES = 48;

@@ -84,6 +84,8 @@ export function projectState(
   second: ModalDirection,
   ambient: number,
 ): ModalState {
+  if (state.first.biot === first.biot && state.second.biot === second.biot && sameCount(state, first, second))
+    return shifted(state, ambient);
   const offset = state.ambient - ambient;
   const [left, right] = [overlaps(state.first, first), overlaps(state.second, second)];
   const [rows, columns] = [state.first.modes.length, state.second.modes.length];
@@ -100,6 +102,17 @@ export function projectState(
       for (let q = 0; q < count; q++)
         amplitudes[p * count + q]! += left[p * rows + n]! * half[n * count + q]!;
   return { first, second, amplitudes, ambient };
+}
+
+function sameCount(state: ModalState, first: ModalDirection, second: ModalDirection): boolean {
+  return state.first.modes.length === first.modes.length && state.second.modes.length === second.modes.length;
+}
+
+/** The same field seen from surroundings at another temperature. */
+function shifted(state: ModalState, ambient: number): ModalState {
+  const offset = state.ambient - ambient;
+  const uniform = outer(state.first, state.second, (a, b) => offset * a.coefficient * b.coefficient);
+  return { ...state, amplitudes: state.amplitudes.map((value, i) => value + uniform[i]!), ambient };
 }
 
 /** A field on its way while the surroundings run straight: what readings at many instants share. */
@@ -174,15 +187,16 @@ function sumModes(
   secondDecay: readonly number[],
 ): Readings {
   const columns = second.modes.length;
+  const means = second.modes.map((mode) => mode.mean);
+  const surfaces = second.modes.map((mode) => mode.surface);
   let [core, mean, wall, end, edge] = [0, 0, 0, 0, 0];
   for (let n = 0; n < firstDecay.length; n++) {
     let [centre, average, surface] = [0, 0, 0];
     for (let m = 0; m < secondDecay.length; m++) {
       const amplitude = amplitudes[n * columns + m]! * secondDecay[m]!;
-      const mode = second.modes[m]!;
       centre += amplitude;
-      average += amplitude * mode.mean;
-      surface += amplitude * mode.surface;
+      average += amplitude * means[m]!;
+      surface += amplitude * surfaces[m]!;
     }
     const [mode, decay] = [first.modes[n]!, firstDecay[n]!];
     core += decay * centre;
@@ -221,5 +235,8 @@ function surfaceTerm(old: ModalDirection, a: Mode, fresh: ModalDirection, b: Mod
 }
 
 function outer(first: ModalDirection, second: ModalDirection, f: (a: Mode, b: Mode) => number): Float64Array {
-  return Float64Array.from(first.modes.flatMap((a) => second.modes.map((b) => f(a, b))));
+  const out = new Float64Array(first.modes.length * second.modes.length);
+  let i = 0;
+  for (const a of first.modes) for (const b of second.modes) out[i++] = f(a, b);
+  return out;
 }

@@ -78,8 +78,9 @@ type Reading = Record<(typeof PLACES)[number], number>;
 
 /**
  * Temperatures of a simple body at given times, through all stages one after the other; exact but for rounding and a
- * cut-off below 1e-8 of the change, for constant properties, one temperature of the surroundings at a time and films
- * that do not change within a stage. The last stage goes on beyond its end when times ask for it.
+ * cut-off below 1e-8 of the change (1e-5 where a stage ends before its modes carry it, or in the first instants of a
+ * round), for constant properties, one temperature of the surroundings at a time and films that do not change within
+ * a stage. The last stage goes on beyond its end when times ask for it.
  *
  * @param times  [s] from the start of the first stage, ascending, 0 or more
  * @throws RangeError for sizes or properties that are not positive, or no stage
@@ -107,7 +108,14 @@ export function seriesHistory(
     began += stage.duration;
   });
   const [core, mean, surface, edge, oneTermCore] = columns;
-  return { core: core!, mean: mean!, surface: surface!, edge: edge!, oneTermCore: oneTermCore!, bridgedShare };
+  return {
+    core: core!,
+    mean: mean!,
+    surface: surface!,
+    edge: edge!,
+    oneTermCore: oneTermCore!,
+    bridgedShare,
+  };
 }
 
 /** One stage on its way: the field at the start of each straight piece of its surroundings. */

@@ -23,7 +23,7 @@ export const FLAT_DISC = 1 / 40;
 export const SAME_FILM = 0.005;
 
 /** Instants per stage at which estimates are worked out, denser at its start: t = duration (i / n)^2. */
-export const INSTANTS_PER_STAGE = 200;
+export const INSTANTS_PER_STAGE = 120;
 
 /** A later stage whose first instants were bridged over more than this share is remarked on. */
 export const BRIDGED_SHARE = 0.01;

@@ -221,8 +221,8 @@ describe("series through stages", () => {
     const later = Float64Array.of(450, 600, 5000);
     const [a, b] = [seriesHistory(finite, plain, later), seriesHistory(finite, broken, later)];
     later.forEach((_, i) => {
-      expect(Math.abs(b.core[i]! - a.core[i]!)).toBeLessThan(1e-3);
-      expect(Math.abs(b.mean[i]! - a.mean[i]!)).toBeLessThan(1e-3);
+      expect(Math.abs(b.core[i]! - a.core[i]!)).toBeLessThan(2e-3);
+      expect(Math.abs(b.mean[i]! - a.mean[i]!)).toBeLessThan(2e-3);
       expect(Math.abs(b.edge[i]! - a.edge[i]!)).toBeLessThan(1e-2);
     });
   });

@@ -50,7 +50,7 @@ describe("curves of an estimate", () => {
     const curve = curveThrough(time, cooling(0), stages);
     for (let t = 3; t < END; t += 37) {
       expect(Math.abs(readCurve(curve, t) - (20 + 480 * Math.exp(-t / TAU)))).toBeLessThan(5e-4);
-      expect(Math.abs(slopeOfCurve(curve, t) / (-0.48 * Math.exp(-t / TAU)) - 1)).toBeLessThan(5e-3);
+      expect(Math.abs(slopeOfCurve(curve, t) / (-0.48 * Math.exp(-t / TAU)) - 1)).toBeLessThan(1e-2);
     }
   });
   test("a bend at the joint of two stages stays a bend", () => {
@@ -94,7 +94,7 @@ describe("answers of an estimate", () => {
   });
   test("spread: core against edge; none for one temperature; by stage", () => {
     // the made-up curves have a corner where the spread is largest, which falls between two instants
-    expect(Math.abs(ask({ ask: "spread" })! - 480 * (1 - Math.exp(-0.3)))).toBeLessThan(1);
+    expect(Math.abs(ask({ ask: "spread" })! - 480 * (1 - Math.exp(-0.3)))).toBeLessThan(3);
     expect(ask({ ask: "spread" }, lumped)).toBe(0);
     expect(ask({ ask: "spread", stage: "air" })).toBe(ask({ ask: "spread" }));
     expect(ask({ ask: "spread", stage: "oil" })).toBeNull();
