@@ -3,7 +3,7 @@ import { computed, effect } from "@preact/signals-core";
 import { LitElement, html, nothing } from "lit";
 import type { TemplateResult } from "lit";
 import { customElement, query, state } from "lit/decorators.js";
-import { CASES } from "../../presets/cases/index.ts";
+import { BUNDLED_CASE, CASES } from "../../presets/cases/index.ts";
 import { LIBRARY } from "../../presets/materials/index.ts";
 import { readCase } from "../case/readCase.ts";
 import type { CaseDocument } from "../case/types.ts";
@@ -138,8 +138,8 @@ export class CorelagApp extends LitElement {
   }
 
   #preset(name: string): void {
-    const found = CASES.find((each) => each.name === name) ?? CASES[0];
-    if (found) this.state.open(structuredClone(found.document));
+    const found = CASES.find((each) => each.id === name) ?? BUNDLED_CASE;
+    this.state.open(structuredClone(found.document));
   }
 
   #read(text: string, name: string): void {
@@ -253,7 +253,7 @@ export class CorelagApp extends LitElement {
       .units=${s.units.value}
       .theme=${s.theme.value}
       .kept=${this.kept}
-      .cases=${CASES.map(({ name, document: { title } }) => ({ name, title: title ?? name }))}
+      .cases=${CASES.map(({ id, document: { title } }) => ({ name: id, title: title ?? id }))}
     ></corelag-head>`;
   }
 

@@ -1,7 +1,7 @@
 /** The blank that says what a region is made of: a material of the document, or one of the library. */
 import { html } from "lit";
 import type { TemplateResult } from "lit";
-import type { MaterialLibrary } from "../../case/library.ts";
+import type { LibraryMaterial, MaterialLibrary } from "../../case/library.ts";
 import type { CaseDocument } from "../../case/types.ts";
 import type { MenuItem } from "../controls/menu.ts";
 import { sendEdit } from "../events.ts";
@@ -28,6 +28,13 @@ export function materialBlank(
   ></corelag-blank>`;
 }
 
+/** Whether this version solves a material: constant values, no melting. Others are not offered. */
+export function isSolved(material: LibraryMaterial): boolean {
+  return (
+    typeof material.conductivity === "number" && typeof material.heatCapacity === "number" && !material.latent
+  );
+}
+
 function options(document: CaseDocument, library: MaterialLibrary): MenuItem[] {
   const own = Object.entries(document.materials).map(([name, material]): MenuItem => {
     const title = "library" in material ? library[material.library]?.title : undefined;
@@ -35,7 +42,7 @@ function options(document: CaseDocument, library: MaterialLibrary): MenuItem[] {
   });
   const taken = new Set(Object.values(document.materials).map((m) => ("library" in m ? m.library : "")));
   const more = Object.entries(library)
-    .filter(([key]) => !taken.has(key))
+    .filter(([key, material]) => !taken.has(key) && isSolved(material))
     .map(([key, { title }], i): MenuItem => ({
       value: FROM_LIBRARY + key,
       label: title,

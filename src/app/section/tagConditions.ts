@@ -98,18 +98,18 @@ function rows(view: TagView, side: string, condition: ConditionDocument): Templa
       step: 5,
       write: film("ambient"),
     }),
-    row(view, side, {
-      name: "emissivity",
-      value: emissivity,
-      dimension: "share",
-      step: 0.05,
-      least: 0,
-      most: 1,
-      write: film("emissivity"),
-    }),
     ...(emissivity === undefined
       ? []
       : [
+          row(view, side, {
+            name: "emissivity",
+            value: emissivity,
+            dimension: "share",
+            step: 0.05,
+            least: 0,
+            most: 1,
+            write: film("emissivity"),
+          }),
           row(view, side, {
             name: "sees walls at",
             value: condition.surroundings ?? ambient,
