@@ -60,6 +60,26 @@ export const SIDE_GAP = 0.5;
 /** A point settles on the neighbours within this many sizes. */
 export const SETTLE_REACH = 1.3;
 
+// ---- rows parallel to sides -----------------------------------------------------------------------------------
+
+/** Rows are added while the next one is thinner than this share of the size along the side. */
+export const ROW_MOST = 0.8;
+/** Most rows, whatever growth is asked for. */
+export const MOST_ROWS = 40;
+/** Between these angles rows run through a corner or end on the neighbouring side. */
+export const ROW_CORNER_LEAST = 55 * DEGREE;
+export const ROW_CORNER_MOST = 125 * DEGREE;
+/** Up to here the columns of two strips lean together into one; beyond, columns fan out from the corner. */
+export const ROW_MITRE_MOST = 210 * DEGREE;
+/** Columns of a fan stand about this far apart: near the corner their cells are nearly as wide as thick. */
+export const ROW_FAN_STEP = 45 * DEGREE;
+/** Rows take this share of a wall's thickness at most, of a radius towards whose centre they run, of a short side. */
+export const ROW_WALL_SHARE = 0.33;
+export const ROW_RADIUS_SHARE = 0.4;
+export const ROW_SIDE_SHARE = 0.4;
+/** Columns that lean at a corner stand upright again after so many depths of the rows. */
+export const ROW_LEAN_DEPTHS = 3;
+
 // ---- relaxation and repair -----------------------------------------------------------------------------------
 
 /** Passes of centroid relaxation; the fourth changes the mean quality by less than 0.001. */

@@ -2,7 +2,7 @@
  * The mesher: outline -> size field -> nodes on sides -> front -> Delaunay with sides -> relaxation -> repair.
  */
 import { assembleMesh } from "./assembleMesh.ts";
-import { carveRegions } from "./carve.ts";
+import { carveRegions, ROW_LOCK } from "./carve.ts";
 import { COUNT_TOLERANCE, MOST_NODES, MOST_PLACINGS, PACKING, RELAX_PASSES } from "./defaults.ts";
 import { packTriangles } from "./editTriangles.ts";
 import { fillFromSides, type PlacedPoints } from "./front.ts";
@@ -10,7 +10,9 @@ import { readOutline, type Outline } from "./outline.ts";
 import { recoverEdge } from "./recoverEdge.ts";
 import { relax } from "./relax.ts";
 import { repair } from "./repair.ts";
-import { placeSideNodes, type SideNodes } from "./sideNodes.ts";
+import { planRows, type RowPlan } from "./rowPlan.ts";
+import { placeSidesAndRows } from "./rowStrips.ts";
+import type { SideNodes } from "./sideNodes.ts";
 import { sizeSources, type SizeSources } from "./sizeSources.ts";
 import { SizeTree } from "./sizeTree.ts";
 import { Triangulation } from "./triangulation.ts";
@@ -31,7 +33,8 @@ export function meshRegions(request: MeshRequest): TriangleMesh {
   }
   const outline = readOutline(request);
   const sources = sizeSources(outline);
-  const { sides, points } = placeNodes(outline, sources, request.nodes);
+  const plan = planRows(outline, sources.wedges, request.rows ?? []);
+  const { sides, points } = placeNodes(outline, sources, plan, request.nodes);
   const mesh = triangulate(outline, sides, points);
   return assembleMesh(mesh, outline, sides.x.length);
 }
@@ -42,22 +45,41 @@ interface Placing {
 }
 
 /** Places nodes, and again with another aim while their number is off; no triangulation is made meanwhile. */
-function placeNodes(outline: Outline, sources: SizeSources, nodes: number): Placing {
+function placeNodes(outline: Outline, sources: SizeSources, plan: RowPlan | null, nodes: number): Placing {
   const inner = outline.inner.flat();
-  let field = new ScaledField(outline, sources, nodes);
-  let aim = nodes / PACKING;
+  const field = new ScaledField(outline, sources, nodes);
+  const search = new AimSearch(nodes);
   let best: Placing | null = null;
   for (let k = 0; k < MOST_PLACINGS; k++) {
-    field = field.aimedAt(aim);
-    const sides = placeSideNodes(outline, field.tree, sources);
+    field.aimAt(search.aim);
+    const sides = placeSidesAndRows(outline, field.tree, sources, plan);
     const most = Math.ceil(1.5 * field.expected()) + 2 * sides.x.length + 100;
     const points = fillFromSides(field.tree, sides, inner, most);
-    const isBetter = !best || missOf(points.count, nodes) < missOf(best.points.count, nodes);
-    if (isBetter) best = { sides, points };
+    if (!best || missOf(points.count, nodes) < missOf(best.points.count, nodes)) best = { sides, points };
     if (missOf(points.count, nodes) < COUNT_TOLERANCE) break;
-    aim *= nodes / points.count;
+    search.take(points.count);
   }
   return best!;
+}
+
+/** Finds the aim that gives the nodes wanted: in proportion first, then by the slope between the last two trials. */
+class AimSearch {
+  aim: number;
+  private last: { aim: number; count: number } | null = null;
+
+  constructor(private readonly wanted: number) {
+    this.aim = wanted / PACKING;
+  }
+
+  take(count: number): void {
+    const { aim, last, wanted } = this;
+    let slope = 1;
+    if (last && last.aim !== aim && last.count !== count) {
+      slope = Math.log(count / last.count) / Math.log(aim / last.aim);
+    }
+    this.last = { aim, count };
+    this.aim = aim * Math.pow(wanted / count, 1 / Math.max(0.3, Math.min(1.5, slope)));
+  }
 }
 
 function missOf(count: number, nodes: number): number {
@@ -83,7 +105,7 @@ class ScaledField {
   }
 
   /** Sets the scale for a number of nodes. */
-  aimedAt(nodes: number): this {
+  aimAt(nodes: number): void {
     for (let k = 0; k < 8; k++) {
       const scale = this.scaleFor(nodes);
       const wanted = Math.max(1, this.built * (scale > 1 ? Math.pow(scale, 1.1) : scale));
@@ -92,7 +114,6 @@ class ScaledField {
       this.tree = new SizeTree(this.outline, this.sources, wanted);
     }
     this.tree.scale = Math.min(this.scaleFor(nodes), 1.03);
-    return this;
   }
 
   /** Nodes expected at the present scale, before packing. */
@@ -139,10 +160,18 @@ function triangulate(outline: Outline, sides: SideNodes, points: PlacedPoints): 
 
 function lockSides(mesh: Triangulation, outline: Outline, sides: SideNodes): void {
   for (let c = 0; c < sides.from.length; c++) {
+    if (sides.piece[c]! < 0) continue;
     const [a, b, value] = [sides.from[c]!, sides.to[c]!, sides.piece[c]! + 1];
     if (mesh.lockEdge(a, b, value) || recoverEdge(mesh, a, b, value)) continue;
     const piece = outline.pieces[sides.piece[c]!]!;
     const [x, y] = [sides.x[a]!, sides.y[a]!];
     throw new Error(`side ${piece.leftSide} is crossed or covered by another near r ${x}, z ${y}`);
+  }
+  for (let k = 0; k < sides.rowEdges.length; k += 2) {
+    const [a, b] = [sides.rowEdges[k]!, sides.rowEdges[k + 1]!];
+    const e = mesh.edge(a, b);
+    if (e >= 0 && mesh.lock[e]! > 0) continue;
+    if (mesh.lockEdge(a, b, ROW_LOCK) || recoverEdge(mesh, a, b, ROW_LOCK)) continue;
+    throw new Error(`rows: the edge between nodes ${a} and ${b} cannot be made`);
   }
 }

@@ -102,8 +102,10 @@ export function liftNode(mesh: Triangulation, v: number, size: number): boolean 
     }
     return worst;
   };
-  let x = xy[2 * v]!;
-  let y = xy[2 * v + 1]!;
+  const startX = xy[2 * v]!;
+  const startY = xy[2 * v + 1]!;
+  let x = startX;
+  let y = startY;
   const first = worstAt(x, y);
   let best = first;
   const tryAt = (px: number, py: number): boolean => {
@@ -122,9 +124,10 @@ export function liftNode(mesh: Triangulation, v: number, size: number): boolean 
       for (let d = 0; d < 8; d++) if (tryAt(cx + step * WAYS_X[d]!, cy + step * WAYS_Y[d]!)) again = true;
     }
   }
-  xy[2 * v] = x;
-  xy[2 * v + 1] = y;
-  if (best <= first + 1e-6) return false;
+  const isBetter = best > first + 1e-6;
+  xy[2 * v] = isBetter ? x : startX;
+  xy[2 * v + 1] = isBetter ? y : startY;
+  if (!isBetter) return false;
   pushStar(mesh, v);
   return true;
 }

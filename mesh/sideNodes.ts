@@ -22,19 +22,39 @@ export interface SideNodes {
   readonly piece: number[];
   /** on which hands the front has to fill */
   readonly hands: number[];
+  /** number of the first chord of each piece; its chords follow each other from its a to its b */
+  readonly firstChord: number[];
+  /** pairs of nodes: edges inside the rows, which must be edges of the mesh */
+  readonly rowEdges: number[];
 }
 
 /** Shells at a sharp corner: at most so many, growing by at least this. */
 const MOST_SHELLS = 60;
 const LEAST_SHELL_GROWTH = 0.05;
 
-export function placeSideNodes(outline: Outline, tree: SizeTree, from: SizeSources): SideNodes {
-  const nodes: SideNodes = { x: [...outline.x], y: [...outline.y], from: [], to: [], piece: [], hands: [] };
+/** @param rowStops  shares at which each piece must have nodes, for rows that end there */
+export function placeSideNodes(
+  outline: Outline,
+  tree: SizeTree,
+  from: SizeSources,
+  rowStops: readonly (readonly number[])[] = [],
+): SideNodes {
+  const nodes: SideNodes = {
+    x: [...outline.x],
+    y: [...outline.y],
+    from: [],
+    to: [],
+    piece: [],
+    hands: [],
+    firstChord: [],
+    rowEdges: [],
+  };
   const firstStep = Float64Array.from(outline.x, (x, v) => tree.sizeAt(x, outline.y[v]!));
   outline.pieces.forEach((piece, k) => {
     const stops = [
       ...shells(piece, tree, from.sharpest[piece.a]!, firstStep[piece.a]!, false),
       ...shells(piece, tree, from.sharpest[piece.b]!, firstStep[piece.b]!, true),
+      ...(rowStops[k] ?? []),
     ].sort((s, t) => s - t);
     placeOnPiece(nodes, piece, k, spacedShares(piece, stops, tree));
   });
@@ -45,6 +65,7 @@ function placeOnPiece(nodes: SideNodes, piece: Piece, k: number, shares: readonl
   const p = [0, 0];
   const hands = (piece.left >= 0 ? LEFT_HAND : 0) | (piece.right >= 0 ? RIGHT_HAND : 0);
   let last = piece.a;
+  nodes.firstChord.push(nodes.from.length);
   const chordTo = (node: number) => {
     nodes.from.push(last);
     nodes.to.push(node);
