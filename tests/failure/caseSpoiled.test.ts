@@ -46,7 +46,7 @@ function allPaths(value: unknown, path: (string | number)[] = []): (string | num
 function replaced(document: unknown, path: readonly (string | number)[], odd: unknown): unknown {
   const copy = structuredClone(document);
   const holder = valueAt(copy, path.slice(0, -1)) as Record<string | number, unknown>;
-  if (odd === undefined) delete holder[path.at(-1)!];
+  if (odd === undefined) Reflect.deleteProperty(holder, path.at(-1)!);
   else holder[path.at(-1)!] = odd;
   return copy;
 }
