@@ -130,9 +130,9 @@ export class CorelagCalliper extends LitElement {
   }
 
   private jaws(from: number, to: number, base: number) {
-    if (to - from < 5) return nothing; // inside the thickness of the line itself
+    if (to - from < 9) return nothing; // inside the thickness of the line itself
     const [a, b] = [from.toFixed(1), to.toFixed(1)];
-    return svg`<path class="jaws" d="M${a} ${base}v-10h3M${b} ${base}v-10h-3M${a} ${base - 2}H${b}" />`;
+    return svg`<path class="jaws" d="M${a} ${base}v-9M${b} ${base}v-9M${a} ${base - 4.5}H${b}" />`;
   }
 }
 

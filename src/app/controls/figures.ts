@@ -151,7 +151,11 @@ const ON_AXIS = 1e-6;
 export function place(at: readonly [r: number, z: number], system: UnitSystem): string {
   const figure = (metres: number): string => {
     const value = toShown(metres, "length", system);
-    return system === "us" ? digits(value, 2) : digits(value, Math.abs(value) < 100 ? 1 : 0);
+    const places = system === "us" ? 2 : Math.abs(value) < 100 ? 1 : 0;
+    return digits(
+      Number(value.toFixed(places)),
+      Number.isInteger(Number(value.toFixed(places))) ? 0 : places,
+    );
   };
   const height = `z${THIN}${figure(at[1])}`;
   return at[0] < ON_AXIS ? `on the axis, ${height}` : `r${THIN}${figure(at[0])}, ${height}`;

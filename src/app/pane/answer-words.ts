@@ -1,10 +1,19 @@
 /** Answers in words: value and doubt, place, what each estimate says and how far it is out. */
 import type { Question, QuestionDocument } from "../../case/types.ts";
-import { toShown } from "../../case/units.ts";
+import { shownUnit, toShown } from "../../case/units.ts";
 import type { Dimension, UnitSystem } from "../../case/units.ts";
 import type { Comparison, SeriesEstimate } from "../../compare/types.ts";
 import type { Answer, StageSpan } from "../../run/result.ts";
-import { difference, digits, duration, place, quantity, temperature, time } from "../controls/figures.ts";
+import {
+  difference,
+  digits,
+  duration,
+  joined,
+  place,
+  quantity,
+  temperature,
+  time,
+} from "../controls/figures.ts";
 import type { Figure } from "../controls/figures.ts";
 import { ONE_TEMPERATURE, seriesName } from "../controls/words.ts";
 import { siValue } from "./sentences.ts";
@@ -127,10 +136,18 @@ export function offBy(
     case "s":
       return `${span(size)} ${off < 0 ? "early" : "late"}`;
     case "degC":
-      return `${difference(size, system).text} too ${off > 0 ? "hot" : "cold"}`;
+      return `${kelvin(size, system)} too ${off > 0 ? "hot" : "cold"}`;
+    case "K":
+      return `${kelvin(size, system)} too ${off > 0 ? "much" : "little"}`;
     default:
-      return `${figureOf(unit, size, null, system).text} too ${off > 0 ? "much" : "little"}`;
+      return `${figureOf(unit, Number(size.toPrecision(2)), null, system).text} too ${off > 0 ? "much" : "little"}`;
   }
+}
+
+/** How far a temperature is out: whole kelvin from ten on, tenths below. */
+function kelvin(size: number, system: UnitSystem): string {
+  const shown = toShown(size, "temperatureDifference", system);
+  return joined(digits(shown, shown < 10 ? 1 : 0), shownUnit("temperatureDifference", system));
 }
 
 /** A difference of times: minutes from two minutes on, up to three hours. */

@@ -34,6 +34,9 @@ export const askStyle = css`
     line-height: 1.3;
     padding-right: 26px;
   }
+  .tail {
+    white-space: nowrap;
+  }
   .ball {
     margin-right: var(--s-2);
     vertical-align: 2px;

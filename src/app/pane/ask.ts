@@ -72,7 +72,7 @@ export class CorelagAsk extends LitElement {
           title="Drag to move this question"
           @pointerdown=${(event: PointerEvent) => this.dispatchEvent(new CustomEvent("lift", { detail: event }))}
           >${this.index + 1}</i
-        ><span class="sentence">${pieces.map((piece) => this.piece(piece))}</span>
+        ><span class="sentence">${this.sentence(pieces)}</span>
         <button
           class="tool more"
           type="button"
@@ -93,6 +93,12 @@ export class CorelagAsk extends LitElement {
   }
 
   // --- the sentence -------------------------------------------------------------------------------------------------
+
+  /** The last blank and the question mark stay together. */
+  private sentence(pieces: readonly Piece[]): unknown[] {
+    const drawn = pieces.map((piece) => this.piece(piece));
+    return [...drawn.slice(0, -2), html`<span class="tail">${drawn.slice(-2)}</span>`];
+  }
 
   private piece(piece: Piece): TemplateResult | string {
     if (typeof piece === "string") return piece;

@@ -192,7 +192,7 @@ export class CorelagPane extends LitElement {
 }
 
 /** Name of the preset that the first hint offers. */
-const SOLVED_EXAMPLE = "ingot";
+const SOLVED_EXAMPLE = "tapered-ingot";
 
 declare global {
   interface HTMLElementTagNameMap {

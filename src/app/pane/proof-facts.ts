@@ -1,8 +1,7 @@
 /** The proof in plain words: what was checked, what came out, and whether it is as it should be. */
 import type { CaseDocument } from "../../case/types.ts";
 import type { UnitSystem } from "../../case/units.ts";
-import type { SchemeName } from "../../march/types.ts";
-import type { CaseResult } from "../../run/result.ts";
+import type { CaseResult, RunFacts } from "../../run/result.ts";
 import { difference, digits, duration, quantity, temperature } from "../controls/figures.ts";
 import { seriesName } from "../controls/words.ts";
 import { scheduleOf } from "../strip/schedule.ts";
@@ -163,7 +162,7 @@ function sizeWords(value: number, dimension: "volume" | "area", system: UnitSyst
   return `${quantity(value / size, "share", system).text}\u00a0${unit}`;
 }
 
-const SCHEMES: Readonly<Record<SchemeName, string>> = {
+const SCHEMES: Readonly<Record<RunFacts["scheme"], string>> = {
   "implicit-euler": "implicit Euler, step by step",
   "tr-bdf2": "TR-BDF2, second order, steps as needed",
   krylov: "rational Krylov, exact in time to the tolerance",

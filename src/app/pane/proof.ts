@@ -35,7 +35,7 @@ export class CorelagProof extends LitElement {
       }
       dl > div {
         display: grid;
-        grid-template-columns: minmax(0, 1fr) auto 20px;
+        grid-template-columns: minmax(0, 1fr) minmax(0, max-content) 20px;
         column-gap: var(--s-2);
         align-items: baseline;
         padding: 3px var(--s-4);
@@ -49,12 +49,13 @@ export class CorelagProof extends LitElement {
       }
       dd b {
         font-weight: var(--w-firm);
-        white-space: nowrap;
+        text-wrap: balance;
       }
       dt small {
         font-size: var(--t-note);
-        color: var(--ink-3);
-        padding-left: 6px;
+        color: var(--ink-2);
+        display: block;
+        line-height: 1.25;
       }
       .mark {
         align-self: center;

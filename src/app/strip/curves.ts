@@ -24,7 +24,10 @@ export function curvesOf(result: CaseResult): Curve[] {
     { habit: "mean", name: "mean", time, values: mean },
     { habit: "skin", name: "skin", time, values: surfaceMean },
   ];
-  for (const [name, values] of Object.entries(probes)) curves.push({ habit: "probe", name, time, values });
+  for (const [name, values] of Object.entries(probes)) {
+    const taken = curves.some((curve) => curve.habit !== "probe" && curve.name === name);
+    curves.push({ habit: "probe", name: taken ? `${name}, probe` : name, time, values });
+  }
   if (series !== null)
     curves.push({
       habit: "series",

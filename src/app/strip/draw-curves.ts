@@ -89,9 +89,17 @@ export function drawMarks(
     const own = [scales.x(mark.at), scales.y(mark.degC)] as const;
     return svg`${mark.bracket === null ? nothing : drawBracket(frame, mark)}
       ${mark.drops ? svg`<path class="drop" d="M${f(own[0])} ${f(own[1])}V${scales.bottom}" />` : nothing}
+      <path class="drop" d=${thread(own, x, y, balloonSize(scales.room.height))} />
       ${mark.bracket === null ? svg`<circle class="at" cx=${f(own[0])} cy=${f(own[1])} r="2.5" />` : nothing}
       ${drawBalloon(x, y, mark.index, mark.index === lit, balloonSize(scales.room.height))}`;
   })}`;
+}
+
+/** A thread from the point to the rim of its balloon; the bracket of a spread is its own. */
+function thread([x0, y0]: readonly [number, number], x: number, y: number, radius: number): string {
+  const length = Math.hypot(x - x0, y - y0);
+  const share = length > radius ? 1 - radius / length : 0;
+  return `M${f(x0)} ${f(y0)}L${f(x0 + share * (x - x0))} ${f(y0 + share * (y - y0))}`;
 }
 
 function drawBracket({ scales }: Frame, { at, bracket }: AnswerMark): SVGTemplateResult {

@@ -182,7 +182,9 @@ const LINE_ROOM = 7;
 export function timeGraduations(end: number, width: number): TimeGraduations {
   const pixels = width / Math.max(end, 1e-9);
   const unit = UNITS.find(({ from }) => end >= from) ?? UNITS[3];
-  const fits = LADDER.find(([major]) => major * pixels >= FIGURE_ROOM && isMultiple(major, unit.seconds));
+  const fits = LADDER.find(
+    ([major]) => major * pixels >= FIGURE_ROOM && major <= end && isMultiple(major, unit.seconds),
+  );
   const [major, cuts] = fits ?? coarse(end, width);
   const [minor, middle] = cuts.find(([line]) => line * pixels >= LINE_ROOM) ?? [major, major];
   const lines: Graduation[] = [];

@@ -94,7 +94,8 @@ export class Hand {
   /** The end of an "until" stage follows from its limit: the limit becomes what the curve reads at the pointer. */
   #limitAt(frame: Frame, stage: number, at: number): void {
     const block = frame.schedule[stage]!;
-    const curve = frame.curves.find(({ name }) => name === block.until?.where) ?? frame.curves[0];
+    const curve =
+      frame.curves.find(({ name }) => name.replace(/, probe$/, "") === block.until?.where) ?? frame.curves[0];
     if (curve === undefined) return;
     const degC = snapped(valueAt(curve.time, curve.values, Math.min(at, frame.end)), DEGREE_STEP);
     this.host.edit(`limit of ${block.name}`, limitStage(block, degC, this.host.system()), `limit-${stage}`);
