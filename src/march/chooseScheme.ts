@@ -1,9 +1,17 @@
 /** Which scheme marches a stage. */
 import { implicitEuler } from "./implicitEuler.ts";
+import { krylov } from "./krylov.ts";
 import type { Scheme, SchemeName } from "./types.ts";
 
-/** The scheme of that name; without one, the default. */
+/** The scheme of that name; without one, the Krylov march, which is exact in time where a stage is linear. */
 export function chooseScheme(name: SchemeName | undefined): Scheme {
-  void name;
-  return implicitEuler;
+  switch (name) {
+    case "implicit-euler":
+      return implicitEuler;
+    case "krylov":
+    case undefined:
+      return krylov;
+    case "tr-bdf2":
+      throw new Error("tr-bdf2 is not among the schemes of this version; use implicit-euler or krylov");
+  }
 }

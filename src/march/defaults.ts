@@ -26,3 +26,27 @@ export const SAME_INSTANT = 1e-10;
 
 /** Factors kept at a time: the step and its half. */
 export const FACTORS_KEPT = 2;
+
+/** Numbers of the Krylov march, from the study described in DEVELOPERS.md [krylov]. */
+export const KRYLOV = {
+  /** shift g as a share of the segment: smaller where early instants matter */
+  shiftEarly: 0.005,
+  shiftLate: 0.01,
+  /** a first instant beyond this share of the segment counts as late */
+  lateShare: 0.01,
+  /** vectors before the first check, and between two checks */
+  leastVectors: 10,
+  checkEvery: 5,
+  /** beyond this the three-term recursion begins to lose digits, and parting the stage is cheaper */
+  vectorsBeforeParting: 40,
+  mostVectors: 60,
+  /** where a segment is parted, as a share of it, and how many segments a stage may have */
+  partAt: 1e-3,
+  mostSegments: 4,
+  /** first instant that has to be right in a segment that begins later, as a share of it */
+  earlyShare: 1e-3,
+  /** a next Lanczos vector this short means that the basis is exact */
+  breakdown: 1e-14,
+  /** rounding can make an eigenvalue 0 or negative */
+  leastTheta: 1e-14,
+} as const;

@@ -21,7 +21,7 @@ import {
   SHORTEST_STEP_POWER,
   STEP_SHARE_OF_REMAINDER,
 } from "./defaults.ts";
-import { addLoads, imposeHeld, innerSystem, signalsOf, type InnerSystem } from "./innerSystem.ts";
+import { addLoads, imposeHeld, innerSystem, setHeld, signalsOf, type InnerSystem } from "./innerSystem.ts";
 import { heldMatrix, ShiftedFactors } from "./shiftedFactors.ts";
 import { knotsWithin } from "./signals.ts";
 import { SteppedHistory } from "./steppedHistory.ts";
@@ -30,8 +30,8 @@ import { createWorkspace } from "./workspace.ts";
 
 /**
  * March one stage by implicit Euler. Steps land on the knots of the signals. Held unknowns take their held value at
- * time 0, whatever the start says; with a consistent capacity their jump acts on the neighbours through C, as the
- * limit of a quick ramp does.
+ * time 0, whatever the start says, as new start values: the jump gives the neighbours no push through a consistent
+ * capacity, which would send them out of range for the first instants.
  *
  * @throws NotPositiveDefiniteError when C + dt K is not positive definite
  */
@@ -45,7 +45,7 @@ export const implicitEuler: Scheme = function* (system, start, options) {
       inner,
       solver,
       factors,
-      toInner(solver.numbering, start, start.slice()),
+      setHeld(inner.held, 0, toInner(solver.numbering, start, start.slice())),
       options,
     );
     while (!march.finished) {

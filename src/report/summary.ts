@@ -1,6 +1,6 @@
 /** The answers of a run as a page of plain text, for a terminal. */
 import { formatDoubted, formatDuration, formatTemperature } from "../case/format.ts";
-import { formatNumber, formatQuantity } from "../case/units.ts";
+import { formatQuantity } from "../case/units.ts";
 import type { Dimension } from "../case/dimensions.ts";
 import type { Comparison } from "../compare/types.ts";
 import { verdict } from "../compare/verdict.ts";
@@ -42,18 +42,23 @@ function answerLines(answer: Answer, number: number): string[] {
   return [...lines, ""];
 }
 
+const DIMENSION_OF: Readonly<Record<Answer["unit"], Dimension>> = {
+  s: "time",
+  min: "share",
+  degC: "temperature",
+  K: "temperatureDifference",
+  "K/s": "rate",
+  J: "energy",
+};
+
 /** A value in the words of its unit, with its numerical uncertainty where it is stated. */
 export function valueText(answer: Pick<Answer, "unit">, value: number, doubt: number | null): string {
-  const kinds: Partial<Record<Answer["unit"], Dimension>> = {
-    s: "time",
-    degC: "temperature",
-    K: "temperatureDifference",
-  };
-  const dimension = kinds[answer.unit];
-  if (!dimension)
-    return `${formatNumber(value)} ${answer.unit}${doubt === null ? "" : `, ±${formatNumber(doubt, 1)}`}`;
+  const dimension = DIMENSION_OF[answer.unit];
   const text = formatDoubted(value, doubt, dimension);
-  return text.doubt === "" ? text.value : `${text.value} ${text.doubt}`;
+  const minutes = answer.unit === "min" ? " min" : "";
+  return [text.value + minutes, text.doubt === "" ? "" : text.doubt + minutes]
+    .filter((part) => part !== "")
+    .join(" ");
 }
 
 function placeText({ place, at, unit }: Answer): string {

@@ -36,6 +36,7 @@ export function assembleResult(gathered: Gathered): CaseResult {
   const facts = estimateFacts(input, profile, level.timeline, history.time);
   const estimates = estimateCase(facts);
   const context = comparisonContext(gathered, level, facts.volumetricHeatCapacity * facts.volume);
+  const axisReach = ON_AXIS * profile.high[0];
   const { triangles, triangleRegion } = drawnTriangles(level.part.mesh);
   return {
     title: input.title,
@@ -47,7 +48,7 @@ export function assembleResult(gathered: Gathered): CaseResult {
     history,
     estimates,
     answers: level.answers.map((answer, i) =>
-      answerBeside(answer, stated.answers[i] ?? null, estimates, context),
+      answerBeside(answer, stated.answers[i] ?? null, estimates, context, axisReach),
     ),
     warnings: [...gathered.warnings, ...level.warnings],
     quality: gathered.quality,
@@ -118,8 +119,10 @@ function answerBeside(
   numericalUncertainty: number | null,
   estimates: Estimates,
   context: ComparisonContext,
+  axisReach: number,
 ): Answer {
-  const { slope, ...field } = answer;
+  const { slope, ...found } = answer;
+  const field = { ...found, place: snapToAxis(found.place, axisReach) };
   const reading = { ...field, slope, numericalUncertainty };
   return {
     ...field,
@@ -127,3 +130,9 @@ function answerBeside(
     ...answerByEstimates(answer.question, reading, estimates, context),
   };
 }
+
+/** Share of the part's radius within which a place found inside an element is told as on the axis. */
+const ON_AXIS = 1e-3;
+
+const snapToAxis = (place: Answer["place"], reach: number): Answer["place"] =>
+  place && place[0] < reach ? [0, place[1]] : place;
