@@ -77,6 +77,12 @@ export const ROW_FAN_STEP = 45 * DEGREE;
 export const ROW_WALL_SHARE = 0.33;
 export const ROW_RADIUS_SHARE = 0.4;
 export const ROW_SIDE_SHARE = 0.4;
+/** A column may have one row more than its neighbour when that row is thinner than this share of their distance. */
+export const ROW_STEP_SHARE = 0.7;
+/** Rows stop where the size above them falls below this share of that at their foot: something small lies there. */
+export const ROW_SIZE_DROP = 0.6;
+/** Requested points keep this share of a top edge's length to it, else a row is left out. */
+export const ROW_POINT_GAP = 0.35;
 /** Columns that lean at a corner stand upright again after so many depths of the rows. */
 export const ROW_LEAN_DEPTHS = 3;
 

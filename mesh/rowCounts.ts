@@ -1,6 +1,13 @@
 /** How many rows fit: at corners before the side nodes are placed, at every column after. */
 import type { Chords } from "./chords.ts";
-import { MOST_ROWS, ROW_MOST, ROW_RADIUS_SHARE, ROW_SIDE_SHARE, ROW_WALL_SHARE } from "./defaults.ts";
+import {
+  MOST_ROWS,
+  ROW_MOST,
+  ROW_RADIUS_SHARE,
+  ROW_SIDE_SHARE,
+  ROW_STEP_SHARE,
+  ROW_WALL_SHARE,
+} from "./defaults.ts";
 import type { Outline } from "./outline.ts";
 import { rowDepth, rowThickness, type RowCorner, type RowPlan, type RowStrip } from "./rowPlan.ts";
 import { piecesWithStops } from "./rowPlan.ts";
@@ -107,12 +114,24 @@ export class DepthLimit {
 }
 
 /**
- * Rows per column from what each allows: neighbours differ by one at most. The ends may come out lower than they
- * were: then their corner has to be lowered.
+ * Rows per column from what each allows: neighbours differ by one at most, and only where the step is no steeper
+ * than the columns are apart. The ends may come out lower than they were: then their corner has to be lowered.
+ *
+ * @param apart  distances between neighbouring columns [m], one less than columns
  */
-export function smoothedCounts(allowed: readonly number[]): number[] {
+export function smoothedCounts(
+  strip: RowStrip,
+  allowed: readonly number[],
+  apart: readonly number[],
+): number[] {
   const counts = [...allowed];
-  for (let i = 1; i < counts.length; i++) counts[i] = Math.min(counts[i]!, counts[i - 1]! + 1);
-  for (let i = counts.length - 2; i >= 0; i--) counts[i] = Math.min(counts[i]!, counts[i + 1]! + 1);
+  const mostBeside = (rows: number, gap: number) =>
+    rowThickness(strip, rows + 1) <= ROW_STEP_SHARE * gap ? rows + 1 : rows;
+  for (let i = 1; i < counts.length; i++) {
+    counts[i] = Math.min(counts[i]!, mostBeside(counts[i - 1]!, apart[i - 1]!));
+  }
+  for (let i = counts.length - 2; i >= 0; i--) {
+    counts[i] = Math.min(counts[i]!, mostBeside(counts[i + 1]!, apart[i]!));
+  }
   return counts;
 }

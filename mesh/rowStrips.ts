@@ -3,8 +3,9 @@
  * chords on top from which the front goes on. Columns stand straight, so that the cells are right-angled and
  * Delaunay; at corners they lean over a short way.
  */
-import { ROW_FAN_STEP, ROW_LEAN_DEPTHS } from "./defaults.ts";
+import { ROW_FAN_STEP, ROW_LEAN_DEPTHS, ROW_POINT_GAP, ROW_SIZE_DROP } from "./defaults.ts";
 import type { Outline } from "./outline.ts";
+import { curveLength, distanceToCurve } from "./plane.ts";
 import {
   countRowsAtCorners,
   DepthLimit,
@@ -98,7 +99,8 @@ class RowLayer {
     if (strip.start) allowed[0] = strip.start.rows;
     if (strip.end)
       allowed[allowed.length - 1] = Math.min(strip.end.rows, allowed.length > 1 ? Infinity : allowed[0]!);
-    return { strip, base, along, counts: smoothedCounts(allowed), nodes: [], first, last };
+    const apart = allowed.map((_, k) => along[first + k + 1]! - along[first + k]!);
+    return { strip, base, along, counts: smoothedCounts(strip, allowed, apart), nodes: [], first, last };
   }
 
   private allowedAt(strip: RowStrip, node: number, along: number, limit: DepthLimit): number {
@@ -106,6 +108,11 @@ class RowLayer {
     const size = this.tree.sizeAt(x[node]!, y[node]!);
     const [nx, ny] = this.normalAt(strip, node);
     let rows = rowsThatFit(strip, size, limit.at(x[node]!, y[node]!, nx, ny, size));
+    const sizeAbove = (k: number) => {
+      const depth = rowDepth(strip, k);
+      return this.tree.sizeAt(x[node]! + depth * nx, y[node]! + depth * ny);
+    };
+    while (rows > 0 && sizeAbove(rows) < ROW_SIZE_DROP * size) rows--;
     for (const [from, to, most] of strip.limits)
       if (along >= from && along <= to) rows = Math.min(rows, most);
     return rows;
@@ -236,6 +243,10 @@ class RowLayer {
         this.hasFault = true;
       }
     }
+    if (this.isPointNear([v, out[rows]!, grid[rows]![rows]!, back[rows]!], [1, 2])) {
+      corner.rows--;
+      this.hasFault = true;
+    }
     this.handed.set(corner, { end: [...grid[rows]!], start: grid.map((row) => row[rows]!) });
   }
 
@@ -298,6 +309,8 @@ class RowLayer {
       if (q.length > p.length) sound = this.triangle(p[rows]!, q[rows]!, q[rows + 1]!) && sound;
       const most = Math.max(p.length, q.length) - 1;
       if (most === 0) continue;
+      const cell = [base[i]!, base[i + 1]!, q[q.length - 1]!, p[p.length - 1]!];
+      if (this.isPointNear(cell, [2])) sound = false;
       if (!sound) this.limit(strip, along[i]!, along[i + 1]!, most - 1);
       this.topChord(p[p.length - 1]!, q[q.length - 1]!, strip, along[i]!, along[i + 1]!, most);
       this.coverBase(strip, base[i]!, base[i + 1]!, i);
@@ -350,6 +363,25 @@ class RowLayer {
     }
     if (this.hasFault) levelGroups(this.plan);
     return this.hasFault;
+  }
+
+  /** True when a requested point lies inside the polygon or too near to one of its edges that face the front. */
+  private isPointNear(polygon: readonly number[], edges: readonly number[]): boolean {
+    const { x, y } = this.sides;
+    const curve = (k: number) => {
+      const [a, b] = [polygon[k]!, polygon[(k + 1) % polygon.length]!];
+      return { ax: x[a]!, ay: y[a]!, bx: x[b]!, by: y[b]!, arc: null };
+    };
+    return this.outline.inner.some(([px, py]) => {
+      const isInside = polygon.every((_, k) => {
+        const { ax, ay, bx, by } = curve(k);
+        return (bx - ax) * (py - ay) - (by - ay) * (px - ax) >= 0;
+      });
+      return (
+        isInside ||
+        edges.some((k) => distanceToCurve(curve(k), px, py) < ROW_POINT_GAP * curveLength(curve(k)))
+      );
+    });
   }
 
   // ---- nodes and edges -------------------------------------------------------------------------------------
