@@ -40,6 +40,7 @@ interface Press {
   readonly y: number;
   readonly grip: Grip | null;
   readonly view: View;
+  readonly bare: boolean;
   drag: Drag | null;
   panning: boolean;
 }
@@ -49,6 +50,16 @@ export class BoardHand {
   #keyRest: ReturnType<typeof setTimeout> | undefined;
 
   constructor(private readonly section: CorelagSection) {}
+
+  /** A press is held. */
+  get pressed(): boolean {
+    return this.#press !== null;
+  }
+
+  /** The press that is held began with nothing selected: the tag then waits for its end. */
+  get bare(): boolean {
+    return this.#press?.bare === true;
+  }
 
   /** A thing or the view is being moved. */
   get busy(): boolean {
@@ -63,7 +74,16 @@ export class BoardHand {
     const [x, y] = this.#spot(event);
     if (section.mode !== "take") return this.#act(fromScreen(section.view, x, y));
     const grip = gripOf(event);
-    this.#press = { id: event.pointerId, x, y, grip, view: section.view, drag: null, panning: false };
+    this.#press = {
+      id: event.pointerId,
+      x,
+      y,
+      grip,
+      view: section.view,
+      bare: !section.tagged,
+      drag: null,
+      panning: false,
+    };
     section.board.setPointerCapture(event.pointerId);
     if (grip) section.select(selectionOf(grip));
   };
@@ -89,6 +109,7 @@ export class BoardHand {
     if (press.drag) send(this.section, "corelag-rest", null);
     else if (!press.grip && !press.panning && this.#onDrawing(event)) this.section.select(NOTHING);
     this.section.requestUpdate();
+    void this.section.updateComplete.then(() => this.section.refit());
   };
 
   readonly cancel = (): void => {

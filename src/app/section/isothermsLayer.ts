@@ -15,16 +15,41 @@ import type { Sheet } from "./sheet.ts";
 import { fromScreen, toMirror, toScreen } from "./view.ts";
 import type { Bounds, Spot, View } from "./view.ts";
 
-export function isothermsLayer(
-  scene: Scene,
-  view: View,
-  bounds: Bounds,
-  sheet: Sheet,
-  stops: readonly Rgb[],
-  shown: Shown,
-  units: UnitSystem,
-  big: boolean,
-): SVGTemplateResult {
+export interface IsothermPicture {
+  readonly scene: Scene;
+  readonly view: View;
+  readonly bounds: Bounds;
+  readonly sheet: Sheet;
+  readonly stops: readonly Rgb[];
+  readonly shown: Shown;
+  readonly units: UnitSystem;
+  readonly big: boolean;
+}
+
+/** Keeps the drawn lines while nothing that they depend on changes: most updates of the board leave them alone. */
+export class IsothermKeeper {
+  #picture: IsothermPicture | null = null;
+  #drawn: SVGTemplateResult = svg``;
+
+  layer(picture: IsothermPicture): SVGTemplateResult {
+    const old = this.#picture;
+    const keys = Object.keys(picture) as (keyof IsothermPicture)[];
+    if (!old || keys.some((key) => old[key] !== picture[key])) this.#drawn = isothermsLayer(picture);
+    this.#picture = picture;
+    return this.#drawn;
+  }
+}
+
+function isothermsLayer({
+  scene,
+  view,
+  bounds,
+  sheet,
+  stops,
+  shown,
+  units,
+  big,
+}: IsothermPicture): SVGTemplateResult {
   const mirror = (r: number, z: number): Spot => toMirror(view, r, z);
   const text = (value: number): string => (shown.by === "arrival" ? clock(value) : degrees(value, units));
   const longest = Math.max(0, ...scene.lines.map((line) => text(line.value).length));

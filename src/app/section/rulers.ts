@@ -65,13 +65,8 @@ export function ticksBetween(
 
 const LENGTHS = [4, 7, 10] as const;
 
-/** Both scales, with a pointer at `place` while something is dragged there. */
-export function rulers(
-  view: View,
-  room: RulerRoom,
-  system: UnitSystem,
-  place: Place | null,
-): SVGTemplateResult {
+/** Both scales. */
+export function rulers(view: View, room: RulerRoom, system: UnitSystem): SVGTemplateResult {
   const { width, height, left, foot } = room;
   const bottom = height - foot;
   const unit = shownUnit("length", system);
@@ -101,7 +96,6 @@ export function rulers(
       )}
     <text x="8" y="16">${up} ${unit}</text>
     <text x=${left - 14} y=${height - 4} text-anchor="end">${across} ${unit}</text>
-    ${place === null ? null : pointers(view, room, place)}
   `;
 }
 
@@ -114,7 +108,8 @@ function tickPaths(across: readonly Tick[], up: readonly Tick[], left: number, b
   return `M${left + 0.5} 0V${bottom + 0.5}H${10_000}${below}${beside}`;
 }
 
-function pointers(view: View, { height, left, foot }: RulerRoom, [r, z]: Place): SVGTemplateResult {
+/** Pointers on both scales at a place, and its plumb lines, while something is dragged there. */
+export function pointers(view: View, { height, left, foot }: RulerRoom, [r, z]: Place): SVGTemplateResult {
   const [x, y] = toScreen(view, r, z);
   const bottom = height - foot;
   return svg`

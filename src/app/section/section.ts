@@ -3,10 +3,11 @@
  * is given and sends what the hand does; it works out nothing of the physics.
  */
 import { LitElement, html, nothing, svg } from "lit";
-import type { PropertyValues, TemplateResult } from "lit";
+import type { PropertyValues, SVGTemplateResult, TemplateResult } from "lit";
 import { customElement, property, query, state } from "lit/decorators.js";
 import type { MaterialLibrary } from "../../case/library.ts";
 import type { CaseDocument, CaseProblem } from "../../case/types.ts";
+import type { Place } from "../../editor/arcs.ts";
 import type { UnitSystem } from "../../case/units.ts";
 import { NOTHING, sameSelection } from "../../editor/selection.ts";
 import type { Selection } from "../../editor/selection.ts";
@@ -19,7 +20,7 @@ import { icon } from "../icons.ts";
 import type { Shown, Status } from "../state.ts";
 import { drawing, shared } from "../styles/shared.ts";
 import { captionSentence } from "./caption.ts";
-import { isothermsLayer } from "./isothermsLayer.ts";
+import { IsothermKeeper } from "./isothermsLayer.ts";
 import { BoardHand } from "./boardHand.ts";
 import type { Mode } from "./boardHand.ts";
 import { outlineUnder, sidesLayer } from "./outlineLayer.ts";
@@ -27,7 +28,7 @@ import type { OutlineLayer } from "./outlineLayer.ts";
 import { faultsOf } from "./faults.ts";
 import { Painter, PLAIN_WORDS } from "./painter.ts";
 import { readoutOf, sceneSentence } from "./readout.ts";
-import { rulers } from "./rulers.ts";
+import { pointers, rulers } from "./rulers.ts";
 import { inkFor, SceneKeeper, sceneValueAt } from "./scene.ts";
 import type { Scene } from "./scene.ts";
 import { sectionStyle } from "./sectionStyle.ts";
@@ -85,10 +86,16 @@ export class CorelagSection extends LitElement {
   readonly #keeper = new SceneKeeper();
   #painter: Painter | undefined;
   #stops: readonly Rgb[] = [];
+  #ghost: Sheet | null = null;
   #size = { width: 0, height: 0 };
   #observer = new ResizeObserver(() => this.#resized());
   #moving = 0;
   #fitted: unknown = null;
+  /** what the field was last painted from */
+  #painted: readonly unknown[] = [];
+  readonly #lines = new IsothermKeeper();
+  #scaled: { key: readonly unknown[]; drawn: SVGTemplateResult } = { key: [], drawn: svg`` };
+  #sought: { scene: Scene | null; values: Map<string, number> } = { scene: null, values: new Map() };
 
   override disconnectedCallback(): void {
     super.disconnectedCallback();
@@ -112,6 +119,7 @@ export class CorelagSection extends LitElement {
   }
 
   protected override willUpdate(changed: PropertyValues<this>): void {
+    if (changed.has("earlier")) this.#ghost = this.earlier ? readSheet(this.earlier) : null;
     if (changed.has("document")) {
       this.sheet = readSheet(this.document);
       const fresh = boundsOf(sheetPlaces(this.sheet));
@@ -130,7 +138,7 @@ export class CorelagSection extends LitElement {
         changed.has("problems")) &&
       !this.dragging
     )
-      this.#refit();
+      this.refit();
     this.#paint();
   }
 
@@ -165,8 +173,7 @@ export class CorelagSection extends LitElement {
     const { width, height, left, foot } = this.size;
     const narrow = window.innerWidth <= 760;
     const card = this.problems.length > 0 ? 26 : 0;
-    const beside =
-      narrow || (this.selection.kind === "none" && card === 0) ? 0 : this.#length("--tag") + card + 10;
+    const beside = narrow || (!this.tagged && card === 0) ? 0 : this.#length("--tag") + card + 10;
     const sizes = width > BIG_BOARD ? 40 : 34;
     const pads = lying
       ? { left: 62, right: 58, top: 34, bottom: 2 * (sizes - 8) + 34 }
@@ -208,9 +215,15 @@ export class CorelagSection extends LitElement {
     ]);
   }
 
+  /** Whether the tag may stand: not while the press that selected its thing is still held, so that nothing jumps. */
+  get tagged(): boolean {
+    return this.selection.kind !== "none" && !this.hand.bare;
+  }
+
   /** After an edit or a selection: fits again when what has to be seen or the free room has changed. */
-  #refit(): void {
-    if (this.document && this.#size.width > 0 && this.#fitted !== this.#fitKey()) this.fit();
+  refit(): void {
+    if (this.document && !this.hand.pressed && this.#size.width > 0 && this.#fitted !== this.#fitKey())
+      this.fit();
   }
 
   turn(lying: boolean): void {
@@ -239,7 +252,14 @@ export class CorelagSection extends LitElement {
     const { scene } = this;
     const { width, height } = this.#size;
     if (!this.#painter || width === 0) return;
-    if (!scene) return this.#painter.clear();
+    if (!scene) {
+      this.#painted = [];
+      return this.#painter.clear();
+    }
+    const faint = this.#faint;
+    const key = [scene, this.view, width, height, this.theme, faint, this.#painter.kind];
+    if (key.every((part, i) => part === this.#painted[i])) return;
+    this.#painted = key;
     this.#painter.draw({
       mesh: scene.mesh,
       values: scene.values,
@@ -248,7 +268,7 @@ export class CorelagSection extends LitElement {
       view: this.view,
       sheet: parseHex(getComputedStyle(this).getPropertyValue("--sheet").trim()),
       veil: Number.parseFloat(getComputedStyle(this).getPropertyValue("--mirror-veil")) || 0.5,
-      ghost: this.#faint,
+      ghost: faint,
       width,
       height,
       pixelRatio: Math.min(2, window.devicePixelRatio || 1),
@@ -296,7 +316,7 @@ export class CorelagSection extends LitElement {
     const outline: OutlineLayer = {
       document,
       sheet: this.sheet,
-      ghost: this.earlier ? readSheet(this.earlier) : null,
+      ghost: this.#ghost,
       view: this.view,
       bounds: this.bounds,
       units: this.units,
@@ -309,15 +329,30 @@ export class CorelagSection extends LitElement {
       ...outline,
       answers: field ? (this.result?.answers ?? []) : [],
       focusedAnswer: this.focusedAnswer,
-      valueAt: ([r, z]) => (field ? sceneValueAt(field, r, z) : Number.NaN),
-      inkAt: ([r, z]) => (field ? inkFor(this.#stops, field.range, sceneValueAt(field, r, z)) : "var(--ink)"),
+      valueAt: (place) => (field ? this.#valueAt(field, place) : Number.NaN),
+      inkAt: (place) =>
+        field ? inkFor(this.#stops, field.range, this.#valueAt(field, place)) : "var(--ink)",
       faults,
       big: width > BIG_BOARD,
     };
     const held = this.dragging ? placeOfSelection(this.sheet, this.selection) : null;
     return svg`
-      ${rulers(this.view, { width, height, left, foot }, this.units, held)}
-      ${field ? isothermsLayer(field, this.view, this.bounds, this.sheet, this.#stops, this.shown, this.units, things.big) : nothing}
+      ${this.#scales()}${held ? pointers(this.view, { width, height, left, foot }, held) : nothing}
+      ${
+        field
+          ? this.#lines.layer({
+              scene: field,
+              view: this.view,
+              bounds: this.bounds,
+              // while the hand moves the labels stay where the field still is
+              sheet: outline.ghost ?? this.sheet,
+              stops: this.#stops,
+              shown: this.shown,
+              units: this.units,
+              big: things.big,
+            })
+          : nothing
+      }
       ${outlineUnder(outline)}${sizesLayer(things)}${sidesLayer(outline)}
       ${field ? probesLayer(things) : probesLayer({ ...things, answers: [] })}
       ${balloonsLayer(things)}${threadPath(this, faults)}${pointsLayer(things)}${faultsLayer(things)}
@@ -328,6 +363,26 @@ export class CorelagSection extends LitElement {
   get stageNow(): number {
     const found = this.result?.stages.findIndex((stage) => this.cursor < stage.ended) ?? 0;
     return found >= 0 ? found : Math.max(0, (this.document?.stages.length ?? 1) - 1);
+  }
+
+  /** The scales, drawn again only when they change. */
+  #scales(): SVGTemplateResult {
+    const { width, height, left, foot } = this.size;
+    const key = [this.view, width, height, left, this.units];
+    if (!key.every((part, i) => part === this.#scaled.key[i]))
+      this.#scaled = { key, drawn: rulers(this.view, { width, height, left, foot }, this.units) };
+    return this.#scaled.drawn;
+  }
+
+  /** Value of the field at a place, sought once. */
+  #valueAt(scene: Scene, [r, z]: Place): number {
+    if (this.#sought.scene !== scene) this.#sought = { scene, values: new Map() };
+    const key = `${r} ${z}`;
+    const known = this.#sought.values.get(key);
+    if (known !== undefined) return known;
+    const value = sceneValueAt(scene, r, z);
+    this.#sought.values.set(key, value);
+    return value;
   }
 
   #spokenName(): string {
@@ -347,7 +402,7 @@ export class CorelagSection extends LitElement {
         .problems=${this.problems}
         .undoLabel=${this.undoLabel}
       ></corelag-mend>`;
-    if (this.selection.kind === "none") return nothing;
+    if (!this.tagged) return nothing;
     const place = placeOfSelection(this.sheet, this.selection);
     return html`<corelag-tag
       .document=${this.document}

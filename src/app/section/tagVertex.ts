@@ -1,7 +1,7 @@
 /** The tag of a point: its coordinates, what hangs on them, and the tools that work on a point. */
 import { html, nothing } from "lit";
 import type { TemplateResult } from "lit";
-import { shownUnit } from "../../case/units.ts";
+import { formatNumber, shownUnit, toShown } from "../../case/units.ts";
 import { before, FEWEST_VERTICES, insertVertex, removeVertex, typeCoordinate } from "../../editor/outline.ts";
 import type { LoopIndex } from "../../editor/outline.ts";
 import { loopOf } from "../../editor/outline.ts";
@@ -92,12 +92,8 @@ function amountRows({ amounts, amountsBefore, units }: TagView): TemplateResult 
   if (!amounts) return nothing;
   const change = (now: number, then: number | undefined, dimension: "mass" | "length"): string => {
     if (then === undefined || Math.abs(now - then) < 1e-9 * now) return "";
-    const text = quantity(Math.abs(now - then), dimension, units).text.split(/\s/u)[0]!;
-    return `${now > then ? "+" : "−"}${
-      Number(text)
-        .toPrecision(2)
-        .replace(/\.?0+$/, "") || text
-    }`;
+    const size = toShown(Math.abs(now - then), dimension, units);
+    return `${now > then ? "+" : "\u2212"}${formatNumber(size, 2)}`;
   };
   return html`
     <div>

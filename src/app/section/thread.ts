@@ -41,6 +41,7 @@ export function threadPath(
   const faulty = section.problems.length > 0 && !section.dragging;
   const cards = Number.parseFloat(getComputedStyle(section).getPropertyValue("--tag")) + (faulty ? 26 : 0);
   const end = section.size.width - 12 - cards + (faulty ? 0 : 14);
+  if (!faulty && !section.tagged) return nothing;
   const place = faulty ? faults[0] : placeOfSelection(sheet, selection);
   if (!place || !Number.isFinite(place[0] + place[1])) return nothing;
   const spot =
