@@ -47,6 +47,12 @@ export interface Factor {
    * @returns iterations spent: 1 for an exact factor
    */
   solve(b: Float64Array, x: Float64Array): number;
+  /**
+   * out = A^-1 (M x + extra), the work of one implicit step, with a matrix M of the same solver. `out` holds a guess on
+   * entry and may be `x`.
+   * @returns iterations spent
+   */
+  solveProduct(matrix: HeldMatrix, x: Float64Array, extra: Float64Array, out: Float64Array): number;
 }
 
 export interface SparseSolver {
@@ -96,12 +102,18 @@ export function conjugateGradientsSolver(
     factor() {
       const preconditioner = incompleteCholesky(inner.pattern);
       const own = new Float64Array(inner.source.length);
+      const b = new Float64Array(pattern.size);
       return {
         refresh(values) {
           own.set(values);
           withOuterNumber(numbering, () => preconditioner.refresh(own));
         },
-        solve: (b, x) => conjugateGradients(inner.pattern, own, b, preconditioner, work, aim, x),
+        solve: (rhs, x) => conjugateGradients(inner.pattern, own, rhs, preconditioner, work, aim, x),
+        solveProduct(matrix, x, extra, out) {
+          matrix.multiply(x, b);
+          for (let i = 0; i < b.length; i++) b[i]! += extra[i]!;
+          return conjugateGradients(inner.pattern, own, b, preconditioner, work, aim, out);
+        },
       };
     },
     matrix() {

@@ -5,7 +5,7 @@
 import { SINGULAR_PIVOT } from "./defaults.ts";
 import { NotPositiveDefiniteError } from "./errors.ts";
 import { giveBackInstance, takeInstance, type KernelInstance } from "./kernels/instance.ts";
-import { numberingFrom, type Numbering, type RenumberedPattern } from "./numbering.ts";
+import type { Numbering, RenumberedPattern } from "./numbering.ts";
 import type { SparsityPattern } from "./pattern.ts";
 import type { Factor, HeldMatrix, SparseSolver } from "./solver.ts";
 
@@ -22,7 +22,10 @@ export function choleskySolver(pattern: SparsityPattern, coordinates: Float64Arr
   const instance = takeInstance();
   const kernels = instance.exports;
   analyze(instance, pattern, coordinates);
-  const numbering = numberingFrom(instance.ints(kernels.outerOf.value, size).slice());
+  const numbering = {
+    outerOf: instance.ints(kernels.outerOf.value, size).slice(),
+    innerOf: instance.ints(kernels.innerOf.value, size).slice(),
+  };
   const inner = innerPattern(instance, size, pattern.columns.length);
   // One buffer for values on their way in: they are used up at once.
   const values = kernels.allocateReals(pattern.columns.length);
@@ -63,17 +66,22 @@ function analyze(instance: KernelInstance, pattern: SparsityPattern, coordinates
 }
 
 function innerPattern(instance: KernelInstance, size: number, entries: number): RenumberedPattern {
-  const kernels = instance.exports;
-  const rowStart = instance.ints(kernels.rowStart.value, size + 1).slice();
-  const columns = instance.ints(kernels.columns.value, entries).slice();
-  const source = instance.ints(kernels.source.value, entries).slice();
-  const diagonal = new Int32Array(size);
-  for (let i = 0; i < size; i++) {
-    let place = rowStart[i]!;
-    while (columns[place] !== i) place++;
-    diagonal[i] = place;
-  }
-  return { pattern: { size, rowStart, columns, diagonal }, source };
+  const { rowStart, columns, source, diagonal } = instance.exports;
+  const copy = (list: { readonly value: number }, count: number) => instance.ints(list.value, count).slice();
+  return {
+    pattern: {
+      size,
+      rowStart: copy(rowStart, size + 1),
+      columns: copy(columns, entries),
+      diagonal: copy(diagonal, size),
+    },
+    source: copy(source, entries),
+  };
+}
+
+/** A matrix in kernel memory. */
+interface KernelMatrix extends HeldMatrix {
+  readonly pointer: number;
 }
 
 function choleskyFactor(
@@ -85,7 +93,13 @@ function choleskyFactor(
 ): Factor {
   const kernels = instance.exports;
   const factor = kernels.newFactor();
+  const workX = kernels.workX.value;
+  const workY = kernels.workY.value;
   let filled = false;
+  const ensureFilled = () => {
+    ensureLive();
+    if (!filled) throw new Error("the factor holds no matrix yet");
+  };
   return {
     refresh(values) {
       ensureLive();
@@ -99,12 +113,21 @@ function choleskyFactor(
         );
     },
     solve(b, x) {
-      ensureLive();
-      if (!filled) throw new Error("the factor holds no matrix yet");
-      const work = instance.reals(kernels.workX.value, size);
+      ensureFilled();
+      const work = instance.reals(workX, size);
       work.set(b);
-      kernels.solve(factor, kernels.workX.value);
+      kernels.solve(factor, workX);
       x.set(work);
+      return 1;
+    },
+    solveProduct(matrix, x, extra, out) {
+      ensureFilled();
+      const work = instance.reals(workY, size);
+      instance.reals(workX, size).set(x);
+      work.set(extra);
+      kernels.multiplyAdd((matrix as KernelMatrix).pointer, workX, workY, workY);
+      kernels.solve(factor, workY);
+      out.set(work);
       return 1;
     },
   };
@@ -115,19 +138,24 @@ function kernelMatrix(
   size: number,
   entries: number,
   ensureLive: () => void,
-): HeldMatrix {
+): KernelMatrix {
   const kernels = instance.exports;
-  const own = kernels.allocateReals(entries);
+  const pointer = kernels.allocateReals(entries);
+  const workX = kernels.workX.value;
+  const workY = kernels.workY.value;
   return {
+    pointer,
     refresh(values) {
       ensureLive();
-      instance.reals(own, entries).set(values);
+      instance.reals(pointer, entries).set(values);
     },
     multiply(x, out) {
       ensureLive();
-      instance.reals(kernels.workX.value, size).set(x);
-      kernels.multiply(own, kernels.workX.value, kernels.workY.value);
-      out.set(instance.reals(kernels.workY.value, size));
+      const product = instance.reals(workY, size);
+      instance.reals(workX, size).set(x);
+      product.fill(0);
+      kernels.multiplyAdd(pointer, workX, workY, workY);
+      out.set(product);
       return out;
     },
   };

@@ -32,7 +32,9 @@ describe("sparse Cholesky", () => {
       const pattern = patternOf(graph);
       const values = randomPositiveDefinite(graph, pattern);
       const b = Float64Array.from({ length: graph.size }, seeded(6));
-      const x = solveOnce(pattern, graph.coordinates, values, b, new Float64Array(graph.size), { kind: "cholesky" });
+      const x = solveOnce(pattern, graph.coordinates, values, b, new Float64Array(graph.size), {
+        kind: "cholesky",
+      });
       expect(residual(pattern, values, x, b)).toBeLessThan(1e-11);
     });
 

@@ -28,7 +28,7 @@ export interface KernelExports {
   newFactor(): number;
   factorize(factor: number, values: number, least: number): number;
   solve(factor: number, x: number): void;
-  multiply(values: number, x: number, y: number): void;
+  multiplyAdd(values: number, x: number, z: number, y: number): void;
   factorPanel(panel: number, rows: number, width: number, reciprocals: number, least: number): number;
   subtractProducts(
     c: number,
@@ -42,6 +42,8 @@ export interface KernelExports {
     lower: number,
   ): void;
   readonly outerOf: Global;
+  readonly innerOf: Global;
+  readonly diagonal: Global;
   readonly rowStart: Global;
   readonly columns: Global;
   readonly source: Global;

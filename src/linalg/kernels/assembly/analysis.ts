@@ -1,19 +1,33 @@
 // Analysis of a pattern: everything about the factor that does not depend on values. One instance of this module
 // holds one analysis; several factors and matrices may stand on it.
-import { allocateInts, allocateReals, fillInts, getInt, mark, reset, setInt } from "./memory";
+import {
+  allocateInts,
+  allocateReals,
+  fillInts,
+  getInt,
+  getReal,
+  mark,
+  reset,
+  setInt,
+  setReal,
+} from "./memory";
 import { dissect } from "./dissection";
+import { numberAlongStrips } from "./strips";
 import { columnCounts, eliminationTree, postorder } from "./eliminationTree";
 import { findSupernodes, listRows } from "./supernodes";
 
 /** unknowns and supernodes */
 export let size: i32 = 0;
 export let supernodes: i32 = 0;
-/** outer number of each inner one, n ints */
+/** outer number of each inner one and inner number of each outer one, n ints each */
 export let outerOf: usize = 0;
+export let innerOf: usize = 0;
 /** the pattern in the inner numbering, and the place of each entry in the pattern given */
 export let rowStart: usize = 0;
 export let columns: usize = 0;
 export let source: usize = 0;
+/** place of each diagonal entry in the inner pattern */
+export let diagonal: usize = 0;
 /** first column of each supernode, and n */
 export let first: usize = 0;
 /** rows below each supernode: list `rows` from rowsStart[s] to rowsStart[s + 1] */
@@ -38,7 +52,6 @@ export let workY: usize = 0;
 
 /** values of the largest stack, known after the analysis */
 let stackLength: i32 = 0;
-let innerOf: usize = 0;
 
 /**
  * Analyse a pattern.
@@ -51,19 +64,15 @@ export function analyze(n: i32, patternStart: usize, patternColumns: usize, coor
   const entries = getInt(patternStart, n);
   outerOf = allocateInts(n);
   innerOf = allocateInts(n);
+  diagonal = allocateInts(n);
   rowStart = allocateInts(n + 1);
   columns = allocateInts(entries);
   source = allocateInts(entries);
   first = allocateInts(n + 1);
   rowsStart = allocateInts(n + 1);
   const parent = allocateInts(n);
-  dissect(n, patternStart, patternColumns, coordinates, outerOf);
-  invert(n);
-  eliminationTree(n, patternStart, patternColumns, outerOf, innerOf, parent);
-  postorder(n, outerOf, parent);
-  invert(n);
-  renumber(n, patternStart, patternColumns);
-  const counts = innerOf; // no longer needed as the inverse
+  order(n, entries, patternStart, patternColumns, coordinates, parent);
+  const counts = allocateInts(n);
   columnCounts(n, rowStart, columns, parent, counts);
   supernodes = findSupernodes(n, parent, counts, first, rowsStart);
   const total = getInt(rowsStart, supernodes);
@@ -86,30 +95,85 @@ export function analyze(n: i32, patternStart: usize, patternColumns: usize, coor
   workY = allocateReals(n);
 }
 
-function invert(n: i32): void {
-  for (let i = 0; i < n; i++) setInt(innerOf, getInt(outerOf, i), i);
+/**
+ * The inner numbering, the pattern in it, and the elimination tree. Points are first numbered along strips, whatever
+ * numbering they come in: every later pass then finds neighbours in the cache.
+ */
+function order(
+  n: i32,
+  entries: i32,
+  patternStart: usize,
+  patternColumns: usize,
+  coordinates: usize,
+  parent: usize,
+): void {
+  const before = mark();
+  const strips = allocateInts(n);
+  const inverse = allocateInts(n);
+  const stripStart = allocateInts(n + 1);
+  const stripColumns = allocateInts(entries);
+  const stripSource = allocateInts(entries);
+  const stripCoordinates = allocateReals(2 * n);
+  const own = allocateInts(n);
+  numberAlongStrips(n, coordinates, strips);
+  invert(n, strips, inverse);
+  for (let i = 0; i < n; i++) {
+    const v = getInt(strips, i);
+    setReal(stripCoordinates, 2 * i, getReal(coordinates, 2 * v));
+    setReal(stripCoordinates, 2 * i + 1, getReal(coordinates, 2 * v + 1));
+  }
+  renumber(n, patternStart, patternColumns, strips, inverse, stripStart, stripColumns, stripSource);
+  dissect(n, stripStart, stripColumns, stripCoordinates, own);
+  invert(n, own, inverse);
+  eliminationTree(n, stripStart, stripColumns, own, inverse, parent);
+  postorder(n, own, parent);
+  invert(n, own, inverse);
+  renumber(n, stripStart, stripColumns, own, inverse, rowStart, columns, source);
+  for (let q = 0; q < entries; q++) setInt(source, q, getInt(stripSource, getInt(source, q)));
+  for (let i = 0; i < n; i++) setInt(outerOf, i, getInt(strips, getInt(own, i)));
+  invert(n, outerOf, innerOf);
+  reset(before);
 }
 
-/** The pattern by inner number; rows come out ascending because columns are handed out in ascending order. */
-function renumber(n: i32, patternStart: usize, patternColumns: usize): void {
+function invert(n: i32, list: usize, out: usize): void {
+  for (let i = 0; i < n; i++) setInt(out, getInt(list, i), i);
+}
+
+/**
+ * A pattern renumbered; rows come out ascending because columns are handed out in ascending order.
+ *
+ * @param list     old number of each new one
+ * @param inverse  new number of each old one
+ * @param places   out: old place of each new entry
+ */
+function renumber(
+  n: i32,
+  oldStart: usize,
+  oldColumns: usize,
+  list: usize,
+  inverse: usize,
+  newStart: usize,
+  newColumns: usize,
+  places: usize,
+): void {
   const before = mark();
   const next = allocateInts(n);
   let place = 0;
   for (let i = 0; i < n; i++) {
-    const v = getInt(outerOf, i);
-    setInt(rowStart, i, place);
+    const v = getInt(list, i);
+    setInt(newStart, i, place);
     setInt(next, i, place);
-    place += getInt(patternStart, v + 1) - getInt(patternStart, v);
+    place += getInt(oldStart, v + 1) - getInt(oldStart, v);
   }
-  setInt(rowStart, n, place);
+  setInt(newStart, n, place);
   for (let j = 0; j < n; j++) {
-    const v = getInt(outerOf, j);
-    for (let q = getInt(patternStart, v), end = getInt(patternStart, v + 1); q < end; q++) {
-      const i = getInt(innerOf, getInt(patternColumns, q));
+    const v = getInt(list, j);
+    for (let q = getInt(oldStart, v), end = getInt(oldStart, v + 1); q < end; q++) {
+      const i = getInt(inverse, getInt(oldColumns, q));
       const at = getInt(next, i);
       setInt(next, i, at + 1);
-      setInt(columns, at, j);
-      setInt(source, at, q);
+      setInt(newColumns, at, j);
+      setInt(places, at, q);
     }
   }
   reset(before);
@@ -180,7 +244,10 @@ function locateEntries(n: i32, supernodeOf: usize): void {
         row = width + at - getInt(rowsStart, s);
       }
       setInt(panelPlace, place++, getInt(panelStart, s) + row * width + j - begin);
-      if (j == i) break;
+      if (j == i) {
+        setInt(diagonal, i, q);
+        break;
+      }
     }
   }
   setInt(lowerStart, n, place);

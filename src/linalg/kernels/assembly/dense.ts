@@ -220,11 +220,72 @@ function solveBelow(corner: usize, stride: usize, count: i32, rows: i32, recipro
   }
 }
 
+// Triangular solves go by blocks of four rows, whose own triangle is written out: short loops of unforeseeable length
+// cost more than the arithmetic in them.
+
+@inline export function forwardCorner(row: usize, stride: usize, reciprocals: usize, x: usize): void {
+  const row1 = row + stride;
+  const row2 = row1 + stride;
+  const row3 = row2 + stride;
+  const x0 = load<f64>(x) * load<f64>(reciprocals);
+  const x1 = (load<f64>(x, 8) - load<f64>(row1) * x0) * load<f64>(reciprocals, 8);
+  const x2 = (load<f64>(x, 16) - load<f64>(row2) * x0 - load<f64>(row2, 8) * x1) * load<f64>(reciprocals, 16);
+  const x3 =
+    (load<f64>(x, 24) - load<f64>(row3) * x0 - load<f64>(row3, 8) * x1 - load<f64>(row3, 16) * x2) *
+    load<f64>(reciprocals, 24);
+  store<f64>(x, x0);
+  store<f64>(x, x1, 8);
+  store<f64>(x, x2, 16);
+  store<f64>(x, x3, 24);
+}
+
+@inline export function backwardCorner(row: usize, stride: usize, reciprocals: usize, x: usize): void {
+  const row1 = row + stride;
+  const row2 = row1 + stride;
+  const row3 = row2 + stride;
+  const x3 = load<f64>(x, 24) * load<f64>(reciprocals, 24);
+  const x2 = (load<f64>(x, 16) - load<f64>(row3, 16) * x3) * load<f64>(reciprocals, 16);
+  const x1 = (load<f64>(x, 8) - load<f64>(row3, 8) * x3 - load<f64>(row2, 8) * x2) * load<f64>(reciprocals, 8);
+  const x0 =
+    (load<f64>(x) - load<f64>(row3) * x3 - load<f64>(row2) * x2 - load<f64>(row1) * x1) * load<f64>(reciprocals);
+  store<f64>(x, x0);
+  store<f64>(x, x1, 8);
+  store<f64>(x, x2, 16);
+  store<f64>(x, x3, 24);
+}
+
 /** x := L^-1 x for the lower triangle of `width` rows whose reciprocal diagonal is given */
 export function solveLower(triangle: usize, width: i32, reciprocals: usize, x: usize): void {
   const stride = <usize>width << 3;
-  for (let j = 0; j < width; j++) {
-    const value = getReal(x, j) - dotProduct(triangle + stride * j, x, j);
+  let row = triangle;
+  let j = 0;
+  for (; j + 3 < width; j += 4) {
+    const at = realAt(x, j);
+    const left = <usize>j << 3;
+    if (j > 0) {
+      const row1 = row + stride;
+      const row2 = row1 + stride;
+      const row3 = row2 + stride;
+      let s0 = f64x2.splat(0);
+      let s1 = s0;
+      let s2 = s0;
+      let s3 = s0;
+      for (let k: usize = 0; k < left; k += 16) {
+        const v = v128.load(x + k);
+        s0 = addProduct(s0, v128.load(row + k), v);
+        s1 = addProduct(s1, v128.load(row1 + k), v);
+        s2 = addProduct(s2, v128.load(row2 + k), v);
+        s3 = addProduct(s3, v128.load(row3 + k), v);
+      }
+      v128.store(at, f64x2.sub(v128.load(at), bothSums(s0, s1)));
+      v128.store(at, f64x2.sub(v128.load(at, 16), bothSums(s2, s3)), 16);
+    }
+    forwardCorner(row + left, stride, realAt(reciprocals, j), at);
+    row += stride << 2;
+  }
+  for (; j < width; j++, row += stride) {
+    let value = getReal(x, j);
+    for (let k = 0; k < j; k++) value -= getReal(row, k) * getReal(x, k);
     setReal(x, j, value * getReal(reciprocals, j));
   }
 }
@@ -232,16 +293,32 @@ export function solveLower(triangle: usize, width: i32, reciprocals: usize, x: u
 /** x := L^-T x */
 export function solveLowerTransposed(triangle: usize, width: i32, reciprocals: usize, x: usize): void {
   const stride = <usize>width << 3;
-  for (let j = width - 1; j >= 0; j--) {
+  const blocks = width & ~3;
+  for (let j = width - 1; j >= blocks; j--) {
+    const row = triangle + stride * j;
     const value = getReal(x, j) * getReal(reciprocals, j);
     setReal(x, j, value);
+    for (let i = 0; i < j; i++) setReal(x, i, getReal(x, i) - getReal(row, i) * value);
+  }
+  for (let j = blocks - 4; j >= 0; j -= 4) {
     const row = triangle + stride * j;
-    const v = f64x2.splat(value);
-    let i = 0;
-    for (; i + 1 < j; i += 2) {
-      const at = realAt(x, i);
-      v128.store(at, f64x2.sub(v128.load(at), f64x2.mul(v128.load(realAt(row, i)), v)));
+    const left = <usize>j << 3;
+    const at = x + left;
+    backwardCorner(row + left, stride, reciprocals + left, at);
+    if (j == 0) return;
+    const row1 = row + stride;
+    const row2 = row1 + stride;
+    const row3 = row2 + stride;
+    const v0 = v128.load64_splat(at);
+    const v1 = v128.load64_splat(at, 8);
+    const v2 = v128.load64_splat(at, 16);
+    const v3 = v128.load64_splat(at, 24);
+    for (let k: usize = 0; k < left; k += 16) {
+      let a = f64x2.mul(v128.load(row + k), v0);
+      let b = f64x2.mul(v128.load(row1 + k), v1);
+      a = addProduct(a, v128.load(row2 + k), v2);
+      b = addProduct(b, v128.load(row3 + k), v3);
+      v128.store(x + k, f64x2.sub(v128.load(x + k), f64x2.add(a, b)));
     }
-    if (i < j) setReal(x, i, getReal(x, i) - getReal(row, i) * value);
   }
 }

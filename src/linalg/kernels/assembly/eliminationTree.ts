@@ -77,8 +77,8 @@ export function postorder(n: i32, order: usize, parent: usize): void {
     setInt(newOrder, place, getInt(order, i));
     setInt(newParent, place, p < 0 ? -1 : getInt(newPlace, p));
   }
-  memory.copy(order, newOrder, <usize>n << 2);
-  memory.copy(parent, newParent, <usize>n << 2);
+  memory.copy(order, newOrder, (<usize>n) << 2);
+  memory.copy(parent, newParent, (<usize>n) << 2);
   reset(before);
 }
 
@@ -100,7 +100,8 @@ export function columnCounts(n: i32, rowStart: usize, columns: usize, parent: us
   for (let j = 0; j < n; j++) {
     // The first to reach an unnumbered column is its first descendant; a column nobody reached yet is a leaf.
     setInt(out, j, getInt(firstDescendant, j) < 0 ? 1 : 0);
-    for (let i = j; i >= 0 && getInt(firstDescendant, i) < 0; i = getInt(parent, i)) setInt(firstDescendant, i, j);
+    for (let i = j; i >= 0 && getInt(firstDescendant, i) < 0; i = getInt(parent, i))
+      setInt(firstDescendant, i, j);
   }
   fillInts(highestFirst, n, 255);
   fillInts(previousLeaf, n, 255);
@@ -119,7 +120,7 @@ export function columnCounts(n: i32, rowStart: usize, columns: usize, parent: us
       if (leaf < 0) continue;
       let common = leaf;
       while (getInt(ancestor, common) != common) common = getInt(ancestor, common);
-      for (let k = leaf; k != common; ) {
+      for (let k = leaf; k != common;) {
         const next = getInt(ancestor, k);
         setInt(ancestor, k, common);
         k = next;

@@ -21,9 +21,11 @@ import {
 } from "./analysis";
 import {
   addProduct,
+  backwardCorner,
   dotProduct,
   factorPanel,
   failedColumn,
+  forwardCorner,
   solveLower,
   solveLowerTransposed,
   subtractProducts,
@@ -145,31 +147,57 @@ function forward(s: i32, factor: usize, panels: usize, x: usize): void {
   const begin = getInt(first, s);
   const width = getInt(first, s + 1) - begin;
   const own = realAt(x, begin);
-  let row = realAt(panels, getInt(panelStart, s));
-  let r = intAt(rows, getInt(rowsStart, s));
+  const reciprocals = realAt(factor, begin);
+  const row = realAt(panels, getInt(panelStart, s));
+  const r = intAt(rows, getInt(rowsStart, s));
   const end = intAt(rows, getInt(rowsStart, s + 1));
-  if (width == 1) {
-    const value = load<f64>(own) * getReal(factor, begin);
-    store<f64>(own, value);
-    row += 8;
-    for (; r < end; r += 4, row += 8) subtractFrom(unknownAt(x, r), load<f64>(row) * value);
-    return;
+  if (width == 1) forwardOne(row, reciprocals, own, r, end, x);
+  else if (width == 2) forwardTwo(row, reciprocals, own, r, end, x);
+  else if (width == 3) forwardThree(row, reciprocals, own, r, end, x);
+  else if (width == 4) forwardFour(row, reciprocals, own, r, end, x);
+  else {
+    solveLower(row, width, reciprocals, own);
+    forwardMany(row + ((<usize>width * width) << 3), width, own, r, end, x);
   }
-  solveLower(row, width, realAt(factor, begin), own);
+}
+
+// Panels of one to four columns are most of all: each is written out, with one loop down the rows.
+
+@inline function forwardOne(row: usize, reciprocals: usize, own: usize, r: usize, end: usize, x: usize): void {
+  const value = load<f64>(own) * load<f64>(reciprocals);
+  store<f64>(own, value);
+  for (row += 8; r < end; r += 4, row += 8) subtractFrom(unknownAt(x, r), load<f64>(row) * value);
+}
+
+@inline function forwardTwo(row: usize, reciprocals: usize, own: usize, r: usize, end: usize, x: usize): void {
+  const x0 = load<f64>(own) * load<f64>(reciprocals);
+  const x1 = (load<f64>(own, 8) - load<f64>(row, 16) * x0) * load<f64>(reciprocals, 8);
+  const v = f64x2(x0, x1);
+  v128.store(own, v);
+  for (row += 32; r < end; r += 4, row += 16) subtractFrom(unknownAt(x, r), sumOf(f64x2.mul(v128.load(row), v)));
+}
+
+@inline function forwardThree(row: usize, reciprocals: usize, own: usize, r: usize, end: usize, x: usize): void {
+  const x0 = load<f64>(own) * load<f64>(reciprocals);
+  const x1 = (load<f64>(own, 8) - load<f64>(row, 24) * x0) * load<f64>(reciprocals, 8);
+  const x2 = (load<f64>(own, 16) - load<f64>(row, 48) * x0 - load<f64>(row, 56) * x1) * load<f64>(reciprocals, 16);
+  const v = f64x2(x0, x1);
+  v128.store(own, v);
+  store<f64>(own, x2, 16);
+  for (row += 72; r < end; r += 4, row += 24)
+    subtractFrom(unknownAt(x, r), sumOf(f64x2.mul(v128.load(row), v)) + load<f64>(row, 16) * x2);
+}
+
+@inline function forwardFour(row: usize, reciprocals: usize, own: usize, r: usize, end: usize, x: usize): void {
+  forwardCorner(row, 32, reciprocals, own);
+  const v = v128.load(own);
+  const w = v128.load(own, 16);
+  for (row += 128; r < end; r += 4, row += 32)
+    subtractFrom(unknownAt(x, r), sumOf(addProduct(f64x2.mul(v128.load(row), v), v128.load(row, 16), w)));
+}
+
+function forwardMany(row: usize, width: i32, own: usize, r: usize, end: usize, x: usize): void {
   const stride = <usize>width << 3;
-  row += stride * width;
-  if (width == 2) {
-    const v = v128.load(own);
-    for (; r < end; r += 4, row += 16) subtractFrom(unknownAt(x, r), sumOf(f64x2.mul(v128.load(row), v)));
-    return;
-  }
-  if (width == 4) {
-    const v = v128.load(own);
-    const w = v128.load(own, 16);
-    for (; r < end; r += 4, row += 32)
-      subtractFrom(unknownAt(x, r), sumOf(addProduct(f64x2.mul(v128.load(row), v), v128.load(row, 16), w)));
-    return;
-  }
   const even = stride & ~15;
   const odd = (width & 1) != 0;
   const last = odd ? getReal(own, width - 1) : 0;
@@ -211,21 +239,70 @@ function backward(s: i32, factor: usize, panels: usize, x: usize): void {
   const begin = getInt(first, s);
   const width = getInt(first, s + 1) - begin;
   const own = realAt(x, begin);
-  const triangle = realAt(panels, getInt(panelStart, s));
-  const from = intAt(rows, getInt(rowsStart, s));
+  const reciprocals = realAt(factor, begin);
+  const row = realAt(panels, getInt(panelStart, s));
+  const r = intAt(rows, getInt(rowsStart, s));
   const end = intAt(rows, getInt(rowsStart, s + 1));
-  const stride = <usize>width << 3;
-  const below = triangle + stride * width;
-  if (width == 1) {
-    let value = load<f64>(own);
-    for (let r = from, row = below; r < end; r += 4, row += 8) value -= load<f64>(row) * load<f64>(unknownAt(x, r));
-    store<f64>(own, value * getReal(factor, begin));
-    return;
+  if (width == 1) backwardOne(row, reciprocals, own, r, end, x);
+  else if (width == 2) backwardTwo(row, reciprocals, own, r, end, x);
+  else if (width == 3) backwardThree(row, reciprocals, own, r, end, x);
+  else if (width == 4) backwardFour(row, reciprocals, own, r, end, x);
+  else {
+    const stride = <usize>width << 3;
+    // Few columns: keep them in registers and run down the rows. Many: four rows at a time across all columns.
+    if (width > 8) subtractManyColumns(r, end, row + stride * width, stride, own, x, width);
+    else subtractFewColumns(r, end, row + stride * width, stride, own, x, width);
+    solveLowerTransposed(row, width, reciprocals, own);
   }
-  // Few columns: keep them in registers and run down the rows. Many: take four rows at a time across all columns.
-  if (width > 8) subtractManyColumns(from, end, below, stride, own, x, width);
-  else subtractFewColumns(from, end, below, stride, own, x, width);
-  solveLowerTransposed(triangle, width, realAt(factor, begin), own);
+}
+
+@inline function backwardOne(row: usize, reciprocals: usize, own: usize, r: usize, end: usize, x: usize): void {
+  let value = load<f64>(own);
+  for (row += 8; r < end; r += 4, row += 8) value -= load<f64>(row) * load<f64>(unknownAt(x, r));
+  store<f64>(own, value * load<f64>(reciprocals));
+}
+
+@inline function backwardTwo(row: usize, reciprocals: usize, own: usize, r: usize, end: usize, x: usize): void {
+  let a = v128.load(own);
+  const l10 = load<f64>(row, 16);
+  for (row += 32; r < end; r += 4, row += 16)
+    a = f64x2.sub(a, f64x2.mul(v128.load(row), v128.load64_splat(unknownAt(x, r))));
+  const x1 = f64x2.extract_lane(a, 1) * load<f64>(reciprocals, 8);
+  store<f64>(own, x1, 8);
+  store<f64>(own, (f64x2.extract_lane(a, 0) - l10 * x1) * load<f64>(reciprocals));
+}
+
+@inline function backwardThree(row: usize, reciprocals: usize, own: usize, r: usize, end: usize, x: usize): void {
+  let a = v128.load(own);
+  let x2 = load<f64>(own, 16);
+  const corner = row;
+  for (row += 72; r < end; r += 4, row += 24) {
+    const value = v128.load64_splat(unknownAt(x, r));
+    a = f64x2.sub(a, f64x2.mul(v128.load(row), value));
+    x2 -= load<f64>(row, 16) * f64x2.extract_lane(value, 0);
+  }
+  x2 *= load<f64>(reciprocals, 16);
+  const x1 = (f64x2.extract_lane(a, 1) - load<f64>(corner, 56) * x2) * load<f64>(reciprocals, 8);
+  store<f64>(own, x2, 16);
+  store<f64>(own, x1, 8);
+  store<f64>(
+    own,
+    (f64x2.extract_lane(a, 0) - load<f64>(corner, 48) * x2 - load<f64>(corner, 24) * x1) * load<f64>(reciprocals),
+  );
+}
+
+@inline function backwardFour(row: usize, reciprocals: usize, own: usize, r: usize, end: usize, x: usize): void {
+  let a = v128.load(own);
+  let b = v128.load(own, 16);
+  const corner = row;
+  for (row += 128; r < end; r += 4, row += 32) {
+    const value = v128.load64_splat(unknownAt(x, r));
+    a = f64x2.sub(a, f64x2.mul(v128.load(row), value));
+    b = f64x2.sub(b, f64x2.mul(v128.load(row, 16), value));
+  }
+  v128.store(own, a);
+  v128.store(own, b, 16);
+  backwardCorner(corner, 32, reciprocals, own);
 }
 
 function subtractFewColumns(
@@ -314,12 +391,12 @@ function subtractManyColumns(
 
 // --- products --------------------------------------------------------------------------------------------------------
 
-/** y = A x on the inner pattern */
-export function multiply(values: usize, x: usize, y: usize): void {
+/** y = A x + z on the inner pattern; z may be y */
+export function multiplyAdd(values: usize, x: usize, z: usize, y: usize): void {
   let q = 0;
   for (let i = 0; i < size; i++) {
     const end = getInt(rowStart, i + 1);
-    let even: f64 = 0;
+    let even = getReal(z, i);
     let odd: f64 = 0;
     for (; q + 1 < end; q += 2) {
       even += getReal(values, q) * getReal(x, getInt(columns, q));

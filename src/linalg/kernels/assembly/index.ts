@@ -3,6 +3,8 @@ export { allocateInts, allocateReals, mark, reset } from "./memory";
 export {
   analyze,
   columns,
+  diagonal,
+  innerOf,
   outerOf,
   rowStart,
   size,
@@ -13,4 +15,4 @@ export {
 } from "./analysis";
 export { factorEntries, factorWork } from "./supernodes";
 export { failedDiagonal, failedPivot, subtractProducts, factorPanel } from "./dense";
-export { failedUnknown, factorize, multiply, newFactor, solve } from "./factor";
+export { failedUnknown, factorize, multiplyAdd, newFactor, solve } from "./factor";

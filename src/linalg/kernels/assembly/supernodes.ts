@@ -1,5 +1,15 @@
 // Supernodes: runs of columns of the factor with (nearly) the same rows, stored and worked on as dense panels.
-import { allocateInts, allocateReals, fillInts, getInt, getReal, mark, reset, setInt, setReal } from "./memory";
+import {
+  allocateInts,
+  allocateReals,
+  fillInts,
+  getInt,
+  getReal,
+  mark,
+  reset,
+  setInt,
+  setReal,
+} from "./memory";
 
 /**
  * A supernode is merged with its last child as long as few zeros come along: panels get wider and fewer, which is
@@ -44,7 +54,10 @@ export function findSupernodes(n: i32, parent: usize, counts: usize, first: usiz
   let total = 0;
   for (let j = 0; j < n; j++) {
     const continues =
-      j > 0 && getInt(parent, j - 1) == j && getInt(counts, j - 1) == getInt(counts, j) + 1 && getInt(children, j) == 1;
+      j > 0 &&
+      getInt(parent, j - 1) == j &&
+      getInt(counts, j - 1) == getInt(counts, j) + 1 &&
+      getInt(children, j) == 1;
     if (!continues) setInt(first, total++, j);
     setInt(end, total - 1, j + 1);
   }
@@ -55,7 +68,14 @@ export function findSupernodes(n: i32, parent: usize, counts: usize, first: usiz
 }
 
 /** Merge along last children, front to back, compacting as it goes: `top` supernodes stand finished. */
-function mergeSupernodes(total: i32, parent: usize, counts: usize, first: usize, end: usize, rowsStart: usize): i32 {
+function mergeSupernodes(
+  total: i32,
+  parent: usize,
+  counts: usize,
+  first: usize,
+  end: usize,
+  rowsStart: usize,
+): i32 {
   const before = mark();
   const below = allocateInts(total);
   const zeros = allocateReals(total);
