@@ -148,8 +148,8 @@ describe("sentences", () => {
       { ask: "dose", where: "coldest", reference: 60, z: 7 },
       "What dose does the coldest point get, counted at 60 °C with z 7 K?",
     ],
-    [{ ask: "heat" }, "How much heat has the part taken up by the end?"],
-    [{ ask: "heat", until: 3600 }, "How much heat has the part taken up by 1 h?"],
+    [{ ask: "heat" }, "How much heat has the part exchanged by the end?"],
+    [{ ask: "heat", until: 3600 }, "How much heat has the part exchanged by 1 h?"],
   ])("%j", (question, sentence) => expect(words(question)).toBe(sentence));
 
   test("what cannot be read stands in its blank as it was typed", () => {
@@ -254,6 +254,7 @@ describe("answers in words", () => {
   test("a dose stays in minutes, heat goes into megajoules", () => {
     expect(plain(figureOf("min", 1009.4, 8, "si").text)).toBe("1009 min");
     expect(plain(figureOf("J", 4.2e8, null, "si").text)).toBe("420 MJ");
+    expect(plain(figureOf("J", -501_995_521, 1, "si").text)).toBe("502.00 MJ");
     expect(plain(figureOf("J", 5200, null, "si").text)).toBe("5.2 kJ");
   });
 

@@ -306,7 +306,7 @@ describe("reading at the cursor", () => {
       room: ROOM,
       kept: null,
     }).curves.map(({ name }) => name);
-    expect(names.slice(0, 4)).toEqual(["core", "mean", "skin", "core, probe"]);
+    expect(names.at(-1)).toBe("core, probe");
   });
 });
 

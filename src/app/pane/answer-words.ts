@@ -33,13 +33,18 @@ export function figureOf(
     case "K":
       return difference(value, system, doubt);
     case "K/s":
-      return quantity(value, "rate", system, doubt);
+      return quantity(value, "rate", system, sensible(value, doubt));
     case "min":
-      return dose(value, doubt);
+      return dose(value, sensible(value, doubt));
     case "J":
-      return energy(value, doubt, system);
+      return energy(value, sensible(value, doubt), system);
   }
 }
+
+/** Share of a value below which its doubt is not told: five figures are more than any input is known to. */
+const LEAST_SHARE = 5e-5;
+const sensible = (value: number, doubt: number | null): number | null =>
+  doubt === null ? null : Math.max(doubt, LEAST_SHARE * Math.abs(value));
 
 /** Equivalent minutes of a dose: never hours, they are not times of the clock. */
 function dose(minutes: number, doubt: number | null): Figure {
@@ -47,13 +52,16 @@ function dose(minutes: number, doubt: number | null): Figure {
   return { text: `${text}\u00a0min`, doubt: told === "" ? "" : `${told}\u00a0min` };
 }
 
-/** kJ below 10 MJ, else MJ; Btu as they come. */
+/** Heat is told without a sign, as taken up or given off: kJ below 10 MJ, else MJ; Btu as they come. */
 function energy(joules: number, doubt: number | null, system: UnitSystem): Figure {
-  const { text, doubt: told } = quantity(joules, "energy", system, doubt);
-  if (system === "us" || Math.abs(joules) < 1e7) return { text, doubt: told };
-  const mega = quantity(joules / 1e6, "share", system, doubt === null ? null : doubt / 1e6);
+  const size = Math.abs(joules);
+  if (!inMegajoules(size, system)) return quantity(size, "energy", system, doubt);
+  const mega = quantity(size / 1e6, "share", system, doubt === null ? null : doubt / 1e6);
   return { text: `${mega.text}\u00a0MJ`, doubt: mega.doubt === "" ? "" : `${mega.doubt}\u00a0MJ` };
 }
+
+const inMegajoules = (joules: number, system: UnitSystem): boolean =>
+  system === "si" && Math.abs(joules) >= 1e7;
 
 /** Which kind of point decides, and where: "last: on the axis, z 307"; for a spread when and in which stage. */
 export function whereLine(answer: Answer, stages: readonly StageSpan[], system: UnitSystem): string {
@@ -74,7 +82,8 @@ function stageWords(at: number, stages: readonly StageSpan[]): string {
   return stages.length < 2 || stage === undefined ? "" : `, in ${stage.name}`;
 }
 
-const heatWords = (value: number | null): string => (value !== null && value < 0 ? "given off" : "");
+const heatWords = (value: number | null): string =>
+  value === null || value === 0 ? "" : value < 0 ? "given off" : "taken up";
 
 export interface EstimateLine {
   readonly habit: "lumped" | "series";
@@ -207,17 +216,22 @@ export function wasWords(now: Answer | null, was: Answer | null, system: UnitSys
 export function onCalliper(unit: Answer["unit"], value: number | null, system: UnitSystem): number | null {
   if (value === null) return null;
   if (unit === "s" || unit === "min") return value;
+  if (unit === "J" && inMegajoules(value, system)) return Math.abs(value) / 1e6;
   const dimension = (
     { degC: "temperature", K: "temperatureDifference", "K/s": "rate", J: "energy" } as const
   )[unit];
-  return toShown(value, dimension, system);
+  return toShown(unit === "J" ? Math.abs(value) : value, dimension, system);
 }
 
 /** The doubt on the same scale: a difference, so without the offset of a temperature. */
 export function doubtOnCalliper(
   unit: Answer["unit"],
+  value: number,
   doubt: number | null,
   system: UnitSystem,
 ): number | null {
-  return doubt === null ? null : onCalliper(unit === "degC" ? "K" : unit, doubt, system);
+  if (doubt === null) return null;
+  if (unit === "J")
+    return onCalliper(unit, value, system)! * (doubt / Math.max(Math.abs(value), Number.MIN_VALUE));
+  return onCalliper(unit === "degC" ? "K" : unit, doubt, system);
 }

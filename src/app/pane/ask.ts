@@ -184,7 +184,7 @@ export class CorelagAsk extends LitElement {
     return html`<corelag-calliper
       kind=${unit === "s" ? "time" : "number"}
       .value=${onCalliper(unit, answer.value, this.units)}
-      .doubt=${doubtOnCalliper(unit, answer.numericalUncertainty, this.units)}
+      .doubt=${doubtOnCalliper(unit, answer.value ?? 0, answer.numericalUncertainty, this.units)}
       .lumped=${onCalliper(unit, answer.lumped, this.units)}
       .series=${onCalliper(unit, answer.series, this.units)}
       .lumpedUnsafe=${comparison.lumped?.side === "unsafe"}

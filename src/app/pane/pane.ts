@@ -110,6 +110,12 @@ export class CorelagPane extends LitElement {
   @property() pane: Pane = "answers";
   @query("corelag-answers") private answers!: CorelagAnswers | null;
 
+  override connectedCallback(): void {
+    super.connectedCallback();
+    this.setAttribute("role", "region");
+    this.setAttribute("aria-label", "Answers, proof and hand-over");
+  }
+
   protected override render(): TemplateResult {
     return html`<div class="words" role="tablist" aria-label="Pane" @keydown=${this.keyed}>
         ${PAGES.map(({ pane, word }) => this.word(pane, word))}

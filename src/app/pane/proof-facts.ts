@@ -2,7 +2,7 @@
 import type { CaseDocument } from "../../case/types.ts";
 import type { UnitSystem } from "../../case/units.ts";
 import type { CaseResult, RunFacts } from "../../run/result.ts";
-import { difference, digits, duration, quantity, temperature } from "../controls/figures.ts";
+import { difference, digits, duration, quantity, roundUp, temperature } from "../controls/figures.ts";
 import { seriesName } from "../controls/words.ts";
 import { scheduleOf } from "../strip/schedule.ts";
 import { figureOf } from "./answer-words.ts";
@@ -175,10 +175,16 @@ function timeFacts({ run }: CaseResult, system: UnitSystem): Fact[] {
     { name: "solves", value: digits(run.solves, 0), note: `${digits(run.factorizations, 0)} factors` },
     {
       name: "error in time",
-      value: `\u00b1${difference(run.timeError, system).text.replace(/^0\u00a0/, "under 0.001\u00a0")}`,
+      value: timeError(run.timeError, system),
     },
     { name: "took", value: duration(run.seconds, 0.1), note: "on this machine" },
   ];
+}
+
+/** To one figure; a thousandth of a kelvin is as fine as anybody asks. */
+function timeError(kelvin: number, system: UnitSystem): string {
+  if (kelvin < 1e-3) return `under ${difference(1e-3, system).text}`;
+  return `\u00b1${difference(roundUp(kelvin), system).text}`;
 }
 
 function estimateFacts({ estimates }: CaseResult, system: UnitSystem): Fact[] {
@@ -188,7 +194,7 @@ function estimateFacts({ estimates }: CaseResult, system: UnitSystem): Fact[] {
     facts.push({
       name: "V/A",
       value: quantity(lumped.length, "length", system).text,
-      note: "volume over exposed area",
+      note: "volume over the area that exchanges heat",
     });
     facts.push({ name: "Biot number, V/A", value: digits(lumped.biot, lumped.biot < 0.1 ? 4 : 3) });
     facts.push({ name: "time constant", value: duration(lumped.timeConstant) });

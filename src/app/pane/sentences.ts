@@ -115,7 +115,7 @@ export function sentenceOf(question: QuestionDocument, setting: Setting): Piece[
       ];
     case "heat":
       return [
-        "How much heat has the part taken up by ",
+        "How much heat has the part exchanged by ",
         time("until", question.until, "time", "the end"),
         "?",
       ];
@@ -273,7 +273,7 @@ export const OFFERED: readonly MenuItem[] = [
   { value: "rate", label: "How fast does it pass?", note: "K/s" },
   { value: "held-above", label: "How long is it above?", note: "time" },
   { value: "dose", label: "What dose does it get?", note: "minutes" },
-  { value: "heat", label: "How much heat does it take up?", note: "energy" },
+  { value: "heat", label: "How much heat does it exchange?", note: "energy" },
 ];
 
 /** A new question of a kind, with levels that this case passes and times that lie in it. */

@@ -24,10 +24,6 @@ export function curvesOf(result: CaseResult): Curve[] {
     { habit: "mean", name: "mean", time, values: mean },
     { habit: "skin", name: "skin", time, values: surfaceMean },
   ];
-  for (const [name, values] of Object.entries(probes)) {
-    const taken = curves.some((curve) => curve.habit !== "probe" && curve.name === name);
-    curves.push({ habit: "probe", name: taken ? `${name}, probe` : name, time, values });
-  }
   if (series !== null)
     curves.push({
       habit: "series",
@@ -42,6 +38,10 @@ export function curvesOf(result: CaseResult): Curve[] {
       time: lumped.history.time,
       values: lumped.history.temperature,
     });
+  for (const [name, values] of Object.entries(probes)) {
+    const taken = curves.some((curve) => curve.habit !== "probe" && curve.name === name);
+    curves.push({ habit: "probe", name: taken ? `${name}, probe` : name, time, values });
+  }
   return curves;
 }
 
