@@ -34,6 +34,12 @@ export const REENTRANT_SHARE = 0.3;
 export const REENTRANT_ANGLE = 200 * DEGREE;
 /** Size grows by this much per unit of way: neighbouring triangles differ by a quarter at most. */
 export const GRADING = 0.25;
+/**
+ * Where given vertices alone ask for more nodes than wanted, size may grow faster, by this factor a step and up to
+ * the other number; neighbouring triangles then differ by 1.5.
+ */
+export const GRADING_STEP = 1.25;
+export const GRADING_MOST = 0.5;
 /** A leaf of the size tree is at most this many local sizes wide. */
 export const LEAF_SIZES = 1.5;
 /** Contacts of the inscribed circle count as a wall when seen from its centre at more than this. */
@@ -83,6 +89,8 @@ export const ROW_STEP_SHARE = 0.7;
 export const ROW_SIZE_DROP = 0.6;
 /** Requested points keep this share of a top edge's length to it, else a row is left out. */
 export const ROW_POINT_GAP = 0.35;
+/** Rows take this share of the nodes at most; beyond, all of them are made thicker. */
+export const ROW_NODES_SHARE = 0.5;
 /** Columns that lean at a corner stand upright again after so many depths of the rows. */
 export const ROW_LEAN_DEPTHS = 3;
 

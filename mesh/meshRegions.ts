@@ -3,14 +3,25 @@
  */
 import { assembleMesh } from "./assembleMesh.ts";
 import { carveRegions, ROW_LOCK } from "./carve.ts";
-import { COUNT_TOLERANCE, MOST_NODES, MOST_PLACINGS, PACKING, RELAX_PASSES } from "./defaults.ts";
+import {
+  COUNT_TOLERANCE,
+  GRADING,
+  GRADING_MOST,
+  GRADING_STEP,
+  MOST_ROWS,
+  ROW_NODES_SHARE,
+  MOST_NODES,
+  MOST_PLACINGS,
+  PACKING,
+  RELAX_PASSES,
+} from "./defaults.ts";
 import { packTriangles } from "./editTriangles.ts";
 import { fillFromSides, type PlacedPoints } from "./front.ts";
 import { readOutline, type Outline } from "./outline.ts";
 import { recoverEdge } from "./recoverEdge.ts";
 import { relax } from "./relax.ts";
 import { repair } from "./repair.ts";
-import { planRows, type RowPlan } from "./rowPlan.ts";
+import { coarsenRows, planRows, type RowPlan } from "./rowPlan.ts";
 import { placeSidesAndRows } from "./rowStrips.ts";
 import type { SideNodes } from "./sideNodes.ts";
 import { sizeSources, type SizeSources } from "./sizeSources.ts";
@@ -52,7 +63,7 @@ function placeNodes(outline: Outline, sources: SizeSources, plan: RowPlan | null
   let best: Placing | null = null;
   for (let k = 0; k < MOST_PLACINGS; k++) {
     field.aimAt(search.aim);
-    const sides = placeSidesAndRows(outline, field.tree, sources, plan);
+    const sides = placeAffordableRows(outline, field.tree, sources, plan, nodes);
     const most = Math.ceil(1.5 * field.expected()) + 2 * sides.x.length + 100;
     const points = fillFromSides(field.tree, sides, inner, most);
     if (!best || missOf(points.count, nodes) < missOf(best.points.count, nodes)) best = { sides, points };
@@ -60,6 +71,22 @@ function placeNodes(outline: Outline, sources: SizeSources, plan: RowPlan | null
     search.take(points.count);
   }
   return best!;
+}
+
+/** Rows that would take too many of the nodes are made thicker. */
+function placeAffordableRows(
+  outline: Outline,
+  tree: SizeTree,
+  sources: SizeSources,
+  plan: RowPlan | null,
+  nodes: number,
+): SideNodes {
+  for (let k = 0; k < MOST_ROWS; k++) {
+    const sides = placeSidesAndRows(outline, tree, sources, plan);
+    if (!plan || sides.x.length - sides.firstRowNode <= ROW_NODES_SHARE * nodes) return sides;
+    coarsenRows(plan);
+  }
+  return placeSidesAndRows(outline, tree, sources, null);
 }
 
 /** Finds the aim that gives the nodes wanted: in proportion first, then by the slope between the last two trials. */
@@ -93,6 +120,7 @@ function missOf(count: number, nodes: number): number {
 class ScaledField {
   tree: SizeTree;
   private built: number;
+  private grading = GRADING;
 
   constructor(
     private readonly outline: Outline,
@@ -101,19 +129,29 @@ class ScaledField {
   ) {
     // A wall of a hair's breadth must not be resolved when few nodes are asked for: half its sides' nodes say so.
     this.built = Math.max(1, sideNodesAtFull(sources) / nodes);
-    this.tree = new SizeTree(outline, sources, this.built);
+    this.tree = new SizeTree(outline, sources, this.built, this.grading);
   }
 
   /** Sets the scale for a number of nodes. */
   aimAt(nodes: number): void {
+    this.buildFor(nodes);
+    // Vertices close together hold the size down: let it grow faster away from them.
+    while (this.scaleFor(nodes) > 1 + SCALE_SLACK && this.grading < GRADING_MOST) {
+      this.grading *= GRADING_STEP;
+      this.tree = new SizeTree(this.outline, this.sources, this.built, this.grading);
+      this.buildFor(nodes);
+    }
+    this.tree.scale = Math.min(this.scaleFor(nodes), 1 + SCALE_SLACK);
+  }
+
+  private buildFor(nodes: number): void {
     for (let k = 0; k < 8; k++) {
       const scale = this.scaleFor(nodes);
       const wanted = Math.max(1, this.built * (scale > 1 ? Math.pow(scale, 1.1) : scale));
-      if (Math.abs(wanted / this.built - 1) < 0.015) break;
+      if (Math.abs(wanted / this.built - 1) < 0.015) return;
       this.built = wanted;
-      this.tree = new SizeTree(this.outline, this.sources, wanted);
+      this.tree = new SizeTree(this.outline, this.sources, wanted, this.grading);
     }
-    this.tree.scale = Math.min(this.scaleFor(nodes), 1.03);
   }
 
   /** Nodes expected at the present scale, before packing. */
@@ -137,6 +175,9 @@ function sideNodesAtFull({ stretches, sideStart, count }: SizeSources): number {
   }
   return sum;
 }
+
+/** A tree serves scales this much above the one it was built for. */
+const SCALE_SLACK = 0.03;
 
 /** Room for the nodes that repair adds. */
 const SPARE_SHARE = 1.1;

@@ -205,3 +205,8 @@ function shareSchedules(strips: readonly RowStrip[], corners: readonly RowCorner
     }
   }
 }
+
+/** Leaves out the first row everywhere: what was the second becomes the first. */
+export function coarsenRows({ strips }: RowPlan): void {
+  for (const strip of strips) strip.thickness *= Math.max(1.2, strip.growth);
+}

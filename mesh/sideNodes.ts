@@ -24,6 +24,8 @@ export interface SideNodes {
   readonly hands: number[];
   /** number of the first chord of each piece; its chords follow each other from its a to its b */
   readonly firstChord: number[];
+  /** nodes from here on belong to rows */
+  readonly firstRowNode: number;
   /** pairs of nodes: edges inside the rows, which must be edges of the mesh */
   readonly rowEdges: number[];
 }
@@ -39,15 +41,15 @@ export function placeSideNodes(
   from: SizeSources,
   rowStops: readonly (readonly number[])[] = [],
 ): SideNodes {
-  const nodes: SideNodes = {
+  const nodes = {
     x: [...outline.x],
     y: [...outline.y],
-    from: [],
-    to: [],
-    piece: [],
-    hands: [],
-    firstChord: [],
-    rowEdges: [],
+    from: [] as number[],
+    to: [] as number[],
+    piece: [] as number[],
+    hands: [] as number[],
+    firstChord: [] as number[],
+    rowEdges: [] as number[],
   };
   const firstStep = Float64Array.from(outline.x, (x, v) => tree.sizeAt(x, outline.y[v]!));
   outline.pieces.forEach((piece, k) => {
@@ -58,10 +60,15 @@ export function placeSideNodes(
     ].sort((s, t) => s - t);
     placeOnPiece(nodes, piece, k, spacedShares(piece, stops, tree));
   });
-  return nodes;
+  return { ...nodes, firstRowNode: nodes.x.length };
 }
 
-function placeOnPiece(nodes: SideNodes, piece: Piece, k: number, shares: readonly number[]): void {
+function placeOnPiece(
+  nodes: Omit<SideNodes, "firstRowNode">,
+  piece: Piece,
+  k: number,
+  shares: readonly number[],
+): void {
   const p = [0, 0];
   const hands = (piece.left >= 0 ? LEFT_HAND : 0) | (piece.right >= 0 ? RIGHT_HAND : 0);
   let last = piece.a;

@@ -6,7 +6,7 @@
  * without chords lies wholly inside or wholly outside, by one test; what is outside is not divided further.
  */
 import { chordMeetsSquare, isInside } from "./chords.ts";
-import { GRADING, LEAF_SIZES, MOST_CELLS } from "./defaults.ts";
+import { LEAF_SIZES, MOST_CELLS } from "./defaults.ts";
 import type { Outline } from "./outline.ts";
 import { SOURCE_STRIDE, type SizeSources } from "./sizeSources.ts";
 
@@ -49,11 +49,15 @@ export class SizeTree {
   private readonly value: Float64Array;
   private list: Int32Array;
 
-  /** @param build sizes are multiplied by this before they are graded; side and arc limits hold */
+  /**
+   * @param build    sizes are multiplied by this before they are graded; side and arc limits hold
+   * @param grading  growth of the size per unit of way, at scale 1
+   */
   constructor(
     outline: Outline,
     private readonly from: SizeSources,
     build: number,
+    private readonly grading: number,
   ) {
     this.middleX = (outline.low[0] + outline.high[0]) / 2;
     this.middleY = (outline.low[1] + outline.high[1]) / 2;
@@ -120,7 +124,7 @@ export class SizeTree {
     const radius = Math.SQRT2 * half;
     const best = this.leastSource(k, x, y, half, a, b);
     if (this.list.length < 2 * c - a) this.growList(2 * c - a);
-    const sourcesEnd = this.keepSources(a, b, c, best + 1.3 * GRADING * radius);
+    const sourcesEnd = this.keepSources(a, b, c, best + 1.3 * this.grading * radius);
     let end = sourcesEnd;
     let state = parent;
     if (state === MIXED) {
@@ -129,7 +133,7 @@ export class SizeTree {
     }
     if (state === OUTSIDE) {
       this.child[k] = OUTSIDE;
-    } else if (2 * half <= LEAF_SIZES * Math.max(best - 0.7 * GRADING * radius, 0) || depth >= DEEPEST) {
+    } else if (2 * half <= LEAF_SIZES * Math.max(best - 0.7 * this.grading * radius, 0) || depth >= DEEPEST) {
       this.child[k] = LEAF;
       this.area += this.leafIntegral(k, state === INSIDE);
     } else {
@@ -146,7 +150,7 @@ export class SizeTree {
 
   /** Size at the cell's centre and its slope, away from the source that is least there. */
   private leastSource(k: number, x: number, y: number, half: number, a: number, b: number): number {
-    const { list, sources, value, cells } = this;
+    const { list, sources, value, cells, grading } = this;
     let best = this.largest;
     let bx = 0;
     let by = 0;
@@ -160,7 +164,7 @@ export class SizeTree {
       t = t < 0 ? 0 : t > 1 ? 1 : t;
       dx -= t * sx;
       dy -= t * sy;
-      const v = sources[j + 5]! + t * sources[j + 6]! + GRADING * Math.sqrt(dx * dx + dy * dy);
+      const v = sources[j + 5]! + t * sources[j + 6]! + grading * Math.sqrt(dx * dx + dy * dy);
       value[i - a] = v;
       if (v < best) {
         best = v;
@@ -169,7 +173,7 @@ export class SizeTree {
       }
     }
     const d = Math.sqrt(bx * bx + by * by);
-    const slope = d > 1e-3 * half ? GRADING / d : 0;
+    const slope = d > 1e-3 * half ? this.grading / d : 0;
     const q = CELL_STRIDE * k;
     cells[q] = x;
     cells[q + 1] = y;
@@ -224,13 +228,15 @@ export class SizeTree {
   /** Nodes in a leaf by four points; a leaf on the outline counts only the points that lie inside. */
   private leafIntegral(k: number, whole: boolean): number {
     const q = CELL_STRIDE * k;
-    const [x, y, half, size, gx, gy] = this.cells.subarray(q, q + CELL_STRIDE) as unknown as number[];
-    const s = half! / 2;
+    const { cells } = this;
+    const [x, y, size] = [cells[q]!, cells[q + 1]!, cells[q + 3]!];
+    const [gx, gy] = [cells[q + 4]!, cells[q + 5]!];
+    const s = cells[q + 2]! / 2;
     let sum = 0;
     for (let i = -s; i <= s; i += 2 * s) {
       for (let j = -s; j <= s; j += 2 * s) {
-        if (!whole && !isInside(this.from.chords, x! + i, y! + j)) continue;
-        const h = size! + i * gx! + j * gy!;
+        if (!whole && !isInside(this.from.chords, x + i, y + j)) continue;
+        const h = size + i * gx + j * gy;
         sum += (4 * s * s) / (Math.sqrt(0.75) * h * h);
       }
     }
