@@ -101,7 +101,7 @@ export const RELAX_PASSES = 3;
 /** Triangles with an angle below this are repaired (the promise is 31 degrees). */
 export const REPAIR_ANGLE = 31.9 * DEGREE;
 /** Rounds of repair; there is no proof that repair ends, so it is bounded. */
-export const REPAIR_ROUNDS = 10;
+export const REPAIR_ROUNDS = 16;
 /** A triangle's edge below this share of its size may lose its free end, one above the other may gain a node. */
 export const SHORT_EDGE = 0.8;
 export const LONG_EDGE = 1.25;

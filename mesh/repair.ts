@@ -18,12 +18,15 @@ export interface RepairWork {
 
 const BAR = Math.sin(REPAIR_ANGLE) / Math.sin(Math.PI / 3);
 
+/** Rounds without any gain before repair gives up; each looks further around. */
+const MOST_FRUITLESS = 4;
+
 /** Returns the number of triangles still below the bar. */
 export function repair(work: RepairWork): number {
   let poor = poorTriangles(work.mesh);
   let fruitless = 0;
-  for (let round = 0; round < REPAIR_ROUNDS && poor.length > 0 && fruitless < 3; round++) {
-    liftAround(work, poor);
+  for (let round = 0; round < REPAIR_ROUNDS && poor.length > 0 && fruitless < MOST_FRUITLESS; round++) {
+    liftAround(work, poor, 1 + fruitless);
     if (round % 2 === 0) changeNodes(work, poor);
     const before = poor.length;
     poor = poorTriangles(work.mesh);
@@ -71,11 +74,13 @@ export function shapeOf(xy: Float64Array, a: number, b: number, c: number): numb
   return Math.min(sine / 0.8660254037844386, (1 + cosine) * (1.25 / 1.5));
 }
 
-function liftAround({ mesh, size, fixed }: RepairWork, poor: readonly number[]): void {
-  const movable = new Set<number>();
-  for (const v of poor) {
-    movable.add(v);
-    for (const w of mesh.ringOf(v)) movable.add(w);
+/** Lifts the nodes of poor triangles and those up to so many edges away. */
+function liftAround({ mesh, size, fixed }: RepairWork, poor: readonly number[], rings: number): void {
+  let movable = new Set<number>(poor);
+  for (let k = 0; k < rings; k++) {
+    const wider = new Set(movable);
+    for (const v of movable) for (const w of mesh.ringOf(v)) wider.add(w);
+    movable = wider;
   }
   for (let k = 0; k < 3; k++) {
     let moved = false;
