@@ -52,8 +52,11 @@ function isothermsLayer({
 }: IsothermPicture): SVGTemplateResult {
   const mirror = (r: number, z: number): Spot => toMirror(view, r, z);
   const text = (value: number): string => (shown.by === "arrival" ? clock(value) : degrees(value, units));
-  const longest = Math.max(0, ...scene.lines.map((line) => text(line.value).length));
-  const room = { width: longest * (big ? 7.4 : 6.6) + 7, height: big ? 14 : 12 };
+  const widthOf = (value: number): number => text(value).length * (big ? 7.4 : 6.6) + 7;
+  const room = {
+    width: Math.max(0, ...scene.lines.map((line) => widthOf(line.value))),
+    height: big ? 14 : 12,
+  };
   const labels = placeLabels(scene.lines, mirror, {
     ...room,
     ...labelLine(view, bounds, sheet),
@@ -71,7 +74,7 @@ function isothermsLayer({
         value,
         x,
         y,
-      }) => svg`<rect class="chip" x=${x - room.width / 2} y=${y - room.height / 2} width=${room.width} height=${room.height} rx="2"></rect>
+      }) => svg`<rect class="chip" x=${x - widthOf(value) / 2} y=${y - room.height / 2} width=${widthOf(value)} height=${room.height} rx="2"></rect>
         <text class="level" x=${x} y=${y + (big ? 4.5 : 4)}>${text(value)}</text>`,
     )}
   `;

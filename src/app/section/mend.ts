@@ -9,6 +9,7 @@ import type { LoopIndex } from "../../editor/outline.ts";
 import { send, sendEdit } from "../events.ts";
 import { icon } from "../icons.ts";
 import { shared } from "../styles/shared.ts";
+import { capital } from "./spoken.ts";
 
 /** The point or side that a path of the document leads to; null where it leads elsewhere. */
 export function placeOfPath(path: string): LoopIndex | null {
@@ -84,7 +85,7 @@ export class CorelagMend extends LitElement {
       <p>${rest(first)}</p>
       <p class="acts">${this.acts(first)}</p>
       <p class="aside">
-        ${first.mend}${others > 0 ? html` <b>${others === 1 ? "One more fault" : `${others} more faults`}</b> after this.` : nothing}
+        ${capital(first.mend)}${others > 0 ? html` <b>${others === 1 ? "One more fault" : `${others} more faults`}</b> after this.` : nothing}
       </p>
     </aside>`;
   }
@@ -124,15 +125,36 @@ function putBackWords(label: string): string {
   return moved ? `Put ${moved} back` : `Undo: ${label}`;
 }
 
-/** The first sentence of the message, without its full stop. */
-function headline({ message }: CaseProblem): string {
-  return /^.*?[.!?](?=\s|$)/su.exec(message)?.[0].replace(/\.$/, "") ?? message;
+/** What a fault of the outline is called over its place; other faults are called by their first sentence. */
+const HEADLINES: Readonly<Record<string, string>> = {
+  "outline-not-a-number": "A point has no number",
+  "outline-few-sides": "The outline has too few sides",
+  "outline-no-area": "The outline encloses nothing",
+  "outline-gap": "The outline is open here",
+  "outline-zero-length": "A side has no length",
+  "outline-duplicate": "Two sides lie on each other",
+  "outline-crossing": "The outline crosses itself here",
+  "outline-thin-wall": "The wall is too thin here",
+  "outline-in-pieces": "The part falls apart here",
+  "outline-void-outside": "A void lies outside the part",
+  "outline-overlap": "Two regions overlap here",
+  "outline-negative-radius": "The outline crosses the axis",
+  "outline-gap-to-axis": "The outline leaves a gap to the axis",
+  "outline-stands-apart": "A region stands apart",
+  "probe-outside": "A probe lies outside the part",
+  "not-solved-yet": "Not solved by this version",
+  "side-without-condition": "A side needs a condition",
+};
+
+function headline({ code, message }: CaseProblem): string {
+  return HEADLINES[code] ?? capital(firstSentence(message).replace(/\.$/, ""));
 }
 
-function rest({ message }: CaseProblem): string {
-  const first = /^.*?[.!?](?=\s|$)/su.exec(message)?.[0] ?? message;
-  return message.slice(first.length).trim();
+function rest({ code, message }: CaseProblem): string {
+  return code in HEADLINES ? capital(message) : message.slice(firstSentence(message).length).trim();
 }
+
+const firstSentence = (message: string): string => /^.*?[.!?](?=\s|$)/su.exec(message)?.[0] ?? message;
 
 declare global {
   interface HTMLElementTagNameMap {

@@ -16,7 +16,6 @@ import type { CaseResult } from "../../run/result.ts";
 import { parseHex, readStops } from "../colours.ts";
 import type { Rgb } from "../colours.ts";
 import { send } from "../events.ts";
-import { icon } from "../icons.ts";
 import type { Shown, Status } from "../state.ts";
 import { drawing, shared } from "../styles/shared.ts";
 import { captionSentence } from "./caption.ts";
@@ -37,8 +36,11 @@ import type { Sheet } from "./sheet.ts";
 import { balloonsLayer, faultsLayer, pointsLayer, probesLayer, sizesLayer } from "./thingsLayer.ts";
 import type { ThingsLayer } from "./thingsLayer.ts";
 import { placeOfSelection, threadPath } from "./thread.ts";
-import { between, boundsOf, fitView, prefersLying } from "./view.ts";
-import type { Bounds, Frame, View } from "./view.ts";
+import { MODE_WORDS, sectionTools } from "./tools.ts";
+import { boundsOf } from "./view.ts";
+import type { Bounds, View } from "./view.ts";
+import { BoardView } from "./boardView.ts";
+import type { BoardRoom } from "./boardView.ts";
 import "./facts.ts";
 import "./mend.ts";
 import "./tag.ts";
@@ -46,6 +48,8 @@ import type { CorelagTag } from "./tag.ts";
 
 /** From this width of the board on, type and marks go one step up [px]. */
 const BIG_BOARD = 1000;
+/** Up to this width of the window the tag stands under the section [px]. */
+const NARROW = 760;
 
 @customElement("corelag-section")
 export class CorelagSection extends LitElement {
@@ -69,9 +73,6 @@ export class CorelagSection extends LitElement {
   @property({ attribute: false }) undoLabel: string | null = null;
   @property({ attribute: false }) library: MaterialLibrary = {};
 
-  @state() view: View = { lying: true, scale: 500, x: 100, y: 100 };
-  /** which way the part was turned by hand; null: as its shape asks */
-  @state() private turned: boolean | null = null;
   @state() private step: number | null = null;
   @state() mode: Mode = "take";
   /** pointer on the board [px] */
@@ -89,8 +90,7 @@ export class CorelagSection extends LitElement {
   #ghost: Sheet | null = null;
   #size = { width: 0, height: 0 };
   #observer = new ResizeObserver(() => this.#resized());
-  #moving = 0;
-  #fitted: unknown = null;
+  readonly #holder = new BoardView(() => this.requestUpdate());
   /** what the field was last painted from */
   #painted: readonly unknown[] = [];
   readonly #lines = new IsothermKeeper();
@@ -102,7 +102,7 @@ export class CorelagSection extends LitElement {
     this.#observer.disconnect();
     this.#painter?.close();
     this.#painter = undefined;
-    cancelAnimationFrame(this.#moving);
+    this.#holder.stop();
   }
 
   protected override firstUpdated(): void {
@@ -123,7 +123,7 @@ export class CorelagSection extends LitElement {
     if (changed.has("document")) {
       this.sheet = readSheet(this.document);
       const fresh = boundsOf(sheetPlaces(this.sheet));
-      if (!this.dragging || this.#fitted === null) this.bounds = fresh;
+      if (!this.dragging) this.bounds = fresh;
     }
     if (changed.has("shown")) this.step = null;
     if (changed.has("dragging") && !this.dragging) this.bounds = boundsOf(sheetPlaces(this.sheet));
@@ -144,8 +144,8 @@ export class CorelagSection extends LitElement {
 
   // --- view -----------------------------------------------------------------------------------------------------------
 
-  get lying(): boolean {
-    return this.turned ?? prefersLying(this.bounds);
+  get view(): View {
+    return this.#holder.view;
   }
 
   #resized(): void {
@@ -168,51 +168,17 @@ export class CorelagSection extends LitElement {
     return { ...this.#size, left: this.#length("--scale"), foot: this.#length("--zrule") };
   }
 
-  /** Room that the part may take: inside the scales, clear of the tag, with room for its sizes. */
-  #frame(lying: boolean): Frame {
-    const { width, height, left, foot } = this.size;
-    const narrow = window.innerWidth <= 760;
-    const card = this.problems.length > 0 ? 26 : 0;
-    const beside = narrow || (!this.tagged && card === 0) ? 0 : this.#length("--tag") + card + 10;
-    const sizes = width > BIG_BOARD ? 40 : 34;
-    const pads = lying
-      ? { left: 62, right: 58, top: 34, bottom: 2 * (sizes - 8) + 34 }
-      : { left: 2 * (sizes - 6) + 20, right: 40, top: sizes + 20, bottom: sizes + 44 };
-    return {
-      left: left + pads.left,
-      right: width - beside - pads.right,
-      top: pads.top,
-      bottom: height - foot - pads.bottom,
-    };
+  /** The board's room, and what a card takes of it. */
+  get #room(): BoardRoom {
+    const narrow = window.innerWidth <= NARROW;
+    const mends = this.problems.length > 0 ? 26 : 0;
+    const card = narrow || (!this.tagged && mends === 0) ? 0 : this.#length("--tag") + mends + 10;
+    return { ...this.size, card, big: this.#size.width > BIG_BOARD };
   }
 
   /** Fits the part into the free room, in a short move where the eye should follow. */
   fit(softly = true): void {
-    const target = fitView(this.bounds, this.#frame(this.lying), this.lying);
-    const from = this.view;
-    cancelAnimationFrame(this.#moving);
-    const lasts = softly && from.lying === target.lying ? settleTime(this) : 0;
-    this.#fitted = this.#fitKey();
-    if (lasts === 0) {
-      this.view = target;
-      return;
-    }
-    const began = performance.now();
-    const move = (now: number): void => {
-      const share = Math.min(1, (now - began) / lasts);
-      this.view = share < 1 ? between(from, target, 1 - (1 - share) ** 3) : target;
-      if (share < 1) this.#moving = requestAnimationFrame(move);
-    };
-    this.#moving = requestAnimationFrame(move);
-  }
-
-  #fitKey(): string {
-    return JSON.stringify([
-      this.selection.kind === "none",
-      this.problems.length > 0,
-      this.bounds,
-      this.turned,
-    ]);
+    if (this.#size.width > 0) this.#holder.fit(this.bounds, this.#room, softly ? settleTime(this) : 0);
   }
 
   /** Whether the tag may stand: not while the press that selected its thing is still held, so that nothing jumps. */
@@ -222,19 +188,17 @@ export class CorelagSection extends LitElement {
 
   /** After an edit or a selection: fits again when what has to be seen or the free room has changed. */
   refit(): void {
-    if (this.document && !this.hand.pressed && this.#size.width > 0 && this.#fitted !== this.#fitKey())
-      this.fit();
+    if (this.document && !this.hand.pressed && this.#holder.isStale(this.bounds, this.#room)) this.fit();
   }
 
   turn(lying: boolean): void {
-    this.turned = lying === prefersLying(this.bounds) ? null : lying;
+    this.#holder.turn(lying, this.bounds);
     this.fit(false);
   }
 
   /** Moves the view by hand: it stays until the next fit. */
   setView(view: View): void {
-    cancelAnimationFrame(this.#moving);
-    this.view = view;
+    this.#holder.view = view;
   }
 
   // --- drawing --------------------------------------------------------------------------------------------------------
@@ -278,7 +242,7 @@ export class CorelagSection extends LitElement {
   protected override render(): TemplateResult {
     const { document, scene } = this;
     return html`
-      <div class="caption">${this.#captionLine(scene)}<span class="space"></span>${this.#tools()}</div>
+      <div class="caption">${this.#captionLine(scene)}<span class="space"></span>${sectionTools(this)}</div>
       <div
         class="board ${this.mode === "take" ? "" : "mode"} ${this.dragging ? "dragging" : ""}"
         @pointerdown=${this.hand.down}
@@ -296,7 +260,7 @@ export class CorelagSection extends LitElement {
           aria-roledescription="section drawing"
           aria-label=${this.#spokenName()}
         >
-          ${document ? this.#drawing(document, scene) : nothing}
+          ${document && this.#size.width > 0 ? this.#drawing(document, scene) : nothing}
         </svg>
         <corelag-facts
           .document=${document}
@@ -392,7 +356,7 @@ export class CorelagSection extends LitElement {
       0,
     );
     const name = this.document?.part.regions.map((region) => region.name).join(" and ") ?? "part";
-    return `Section of the ${name}, ${this.lying ? "upper" : "right"} half editable. ${points} points, ${sides} sides, ${this.sheet.probes.length} probes.`;
+    return `Section of the ${name}, ${this.view.lying ? "upper" : "right"} half editable. ${points} points, ${sides} sides, ${this.sheet.probes.length} probes.`;
   }
 
   #card(scene: Scene | null): TemplateResult | typeof nothing {
@@ -434,66 +398,19 @@ export class CorelagSection extends LitElement {
     });
   }
 
-  #tools(): TemplateResult {
-    const tool = (
-      mode: Exclude<Mode, "take">,
-      name: "point" | "arc" | "probe",
-      label: string,
-    ): TemplateResult =>
-      html`<button
-        class="tool"
-        title=${label}
-        aria-label=${label}
-        aria-pressed=${this.mode === mode}
-        @click=${(event: MouseEvent) => this.hand.tool(mode, event.detail === 0)}
-      >
-        ${icon(name)}
-      </button>`;
-    const turn = (lying: boolean, name: "lie" | "stand", label: string): TemplateResult =>
-      html`<button
-        class="tool"
-        title=${label}
-        aria-label=${label}
-        aria-pressed=${this.lying === lying}
-        @click=${() => this.turn(lying)}
-      >
-        ${icon(name)}
-      </button>`;
-    return html`
-      <span class="group draw" role="group" aria-label="Draw">
-        ${tool("point", "point", "Insert a point")}${tool("bend", "arc", "Bend a side into an arc")}${tool("probe", "probe", "Set a probe")}
-      </span>
-      <span class="group" role="group" aria-label="View">
-        ${turn(true, "lie", "Lie down")}${turn(false, "stand", "Stand up")}
-        <button
-          class="tool"
-          title="Fit to the sheet"
-          aria-label="Fit to the sheet"
-          @click=${() => this.fit()}
-        >
-          ${icon("fit")}
-        </button>
-      </span>
-    `;
-  }
-
   select(selection: Selection): void {
     if (!sameSelection(selection, this.selection)) send(this, "corelag-select", selection);
   }
 }
-
-const MODE_WORDS: Readonly<Record<Exclude<Mode, "take">, string>> = {
-  point: "Click the outline where the new point should stand.",
-  bend: "Click the side that should become an arc.",
-  probe: "Click the place of the probe.",
-};
 
 const amountsOf = (profile: Profile | null) =>
   profile ? { mass: profile.mass, length: profile.characteristicLength } : null;
 
 /** ms of a settling move, from the tokens; 0 with reduced motion. */
 function settleTime(element: Element): number {
-  return Number.parseFloat(getComputedStyle(element).getPropertyValue("--m-settle")) || 0;
+  const text = getComputedStyle(element).getPropertyValue("--m-settle").trim();
+  const number = Number.parseFloat(text) || 0;
+  return text.endsWith("ms") ? number : 1000 * number;
 }
 
 declare global {

@@ -26,6 +26,9 @@ export interface Frame {
   readonly bottom: number;
 }
 
+/** Offset at which the one-pixel line of the axis falls on one row of pixels. */
+const CRISP = 0.5;
+
 export type Spot = readonly [x: number, y: number];
 
 /** A part longer than this many diameters lies. */
@@ -60,8 +63,8 @@ export function fitView(bounds: Bounds, frame: Frame, lying: boolean): View {
   const middle = (bounds.zMin + bounds.zMax) / 2;
   const [cx, cy] = [(frame.left + frame.right) / 2, (frame.top + frame.bottom) / 2];
   return lying
-    ? { lying, scale, x: Math.round(cx - middle * scale), y: Math.round(cy) }
-    : { lying, scale, x: Math.round(cx), y: Math.round(cy + middle * scale) };
+    ? { lying, scale, x: Math.round(cx - middle * scale), y: Math.round(cy) + CRISP }
+    : { lying, scale, x: Math.round(cx) + CRISP, y: Math.round(cy + middle * scale) };
 }
 
 /** The view between two views, for the short move from one to the other; share 0 to 1. */

@@ -43,7 +43,7 @@ export class CorelagStart extends LitElement {
 
   protected override render(): TemplateResult {
     return html`
-      <div class="start">
+      <div class="start ${this.kind === null ? "" : "asking"}">
         <h2>What do you heat or cool?</h2>
         <p class="lead">
           Pick the nearest shape; its sizes are asked next and every point can be moved later.
@@ -61,7 +61,7 @@ export class CorelagStart extends LitElement {
     const outline = shapeOutline(shape.kind, picked ? this.#metres() : {});
     const drawn = "outline" in outline ? outline.outline : shape.outline(standardSizes(shape.kind));
     return html`<button class="shape" aria-pressed=${picked} @click=${() => this.#pick(shape.kind)}>
-      ${shapePicture(drawn, shape.kind)}<b>${shape.label}</b><small>${sizesInWords(shape)}</small>
+      ${shapePicture(drawn, shape.kind)}<b>${shape.label}</b><small>${ASKED[shape.kind]}</small>
     </button>`;
   }
 
@@ -158,9 +158,17 @@ export class CorelagStart extends LitElement {
   };
 }
 
-function sizesInWords(shape: Shape): string {
-  return shape.sizes.map((size) => spoken(size.label)).join(", ");
-}
+/** What is asked about each shape, in as few words as fit under its picture. */
+const ASKED: Readonly<Record<ShapeKind, string>> = {
+  ingot: "two diameters, height, crown",
+  "stepped-shaft": "barrel and neck: diameter, length",
+  ring: "bore, outside, width",
+  sphere: "diameter",
+  "plain-round": "diameter, length",
+  tube: "outside, wall, length",
+  cone: "two diameters, height",
+  "bottle-shell": "body, neck, heel, wall",
+};
 
 declare global {
   interface HTMLElementTagNameMap {

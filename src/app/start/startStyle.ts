@@ -75,6 +75,19 @@ export const startStyle = css`
     font-size: var(--t-note);
     line-height: 1.25;
   }
+  /* once a shape is picked its sizes are in the sentence, which needs the room */
+  @media (max-height: 900px) {
+    .asking .shape {
+      min-height: 0;
+      padding-block: var(--s-1);
+    }
+    .asking .shape small {
+      display: none;
+    }
+    .asking .shape svg {
+      height: 62px;
+    }
+  }
   .or {
     margin-top: 14px;
     font-size: var(--t-ask);
