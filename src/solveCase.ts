@@ -29,6 +29,7 @@ import { buildPart, buildStage } from "./run/stageSystem.ts";
 import { settled, statedUncertainty } from "./run/settle.ts";
 import type { SolveOptions } from "./run/solveOptions.ts";
 import { temperatureSpan } from "./run/span.ts";
+import type { Seen } from "./run/span.ts";
 import { unsupportedFields } from "./run/unsupported.ts";
 
 export type { MaterialLibrary } from "./case/readCase.ts";
@@ -94,10 +95,10 @@ async function refineUntilSettled(
 ): Promise<SolveOutcome> {
   const began = context.clock();
   const element = options.element ?? 6;
-  const aim = (options.accuracy ?? input.accuracy) * temperatureSpan(input);
+  const accuracy = options.accuracy ?? input.accuracy;
+  let aim = accuracy * temperatureSpan(input, profile);
   const settings = {
     scheme: options.scheme,
-    tolerance: TIME_SHARE * aim,
     asked: [...instantsAsked(input.questions), ...(options.at ?? [])],
   };
   const request = { regions: profile.regions, points: input.probes.map((probe) => probe.at) };
@@ -105,8 +106,16 @@ async function refineUntilSettled(
   let mesh = meshWithUnknowns(request, options.nodes ?? first, element);
   const levels: Level[] = [];
   for (;;) {
-    const level = await solveLevel(input, profile.sides, mesh, element, settings, context);
+    const level = await solveLevel(
+      input,
+      profile.sides,
+      mesh,
+      element,
+      { ...settings, tolerance: TIME_SHARE * aim },
+      context,
+    );
     if (level) levels.push(level);
+    if (level) aim = accuracy * temperatureSpan(input, profile, rangeOf(level));
     const whole = level?.complete === true;
     const stated = statedUncertainty(levels, element);
     const met = settled(levels, stated, aim);
@@ -132,6 +141,11 @@ async function refineUntilSettled(
     mesh = refineMesh(mesh);
   }
 }
+
+const rangeOf = ({ recording: { history } }: Level): Seen => ({
+  low: history.coldest.reduce((low, value) => Math.min(low, value), Infinity),
+  high: history.hottest.reduce((high, value) => Math.max(high, value), -Infinity),
+});
 
 const shortfall = (reached: number | null, aim: number): string =>
   `The accuracy asked for (${aim.toPrecision(2)} K) was not met within ${NODE_BUDGET} unknowns; ${

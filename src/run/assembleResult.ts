@@ -109,7 +109,10 @@ function comparisonContext(
     stages: level.timeline.stages,
     heatCapacity,
     coreProbes: new Set(atCore.map((probe) => probe.name)),
-    span: temperatureSpan(input),
+    span: temperatureSpan(input, profile, {
+      low: Math.min(...level.recording.history.coldest),
+      high: Math.max(...level.recording.history.hottest),
+    }),
   };
 }
 
