@@ -105,3 +105,8 @@ export const REPAIR_ROUNDS = 16;
 /** A triangle's edge below this share of its size may lose its free end, one above the other may gain a node. */
 export const SHORT_EDGE = 0.8;
 export const LONG_EDGE = 1.25;
+/** A side node may slide by this share of the way to its neighbours. */
+export const SLIDE_MOST = 0.3;
+/** Where side nodes are more than this share of all, the part is thin and they slide to raise the mean quality. */
+export const THIN_SIDE_SHARE = 0.4;
+export const THIN_PASSES = 4;

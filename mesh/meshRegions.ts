@@ -10,6 +10,7 @@ import {
   GRADING_STEP,
   MOST_ROWS,
   ROW_NODES_SHARE,
+  THIN_SIDE_SHARE,
   MOST_NODES,
   MOST_PLACINGS,
   PACKING,
@@ -20,11 +21,12 @@ import { fillFromSides, type PlacedPoints } from "./front.ts";
 import { readOutline, type Outline } from "./outline.ts";
 import { recoverEdge } from "./recoverEdge.ts";
 import { relax } from "./relax.ts";
-import { repair } from "./repair.ts";
+import { evenOutThinPart, repair } from "./repair.ts";
 import { coarsenRows, planRows, type RowPlan } from "./rowPlan.ts";
 import { placeSidesAndRows } from "./rowStrips.ts";
 import type { SideNodes } from "./sideNodes.ts";
 import { sizeSources, type SizeSources } from "./sizeSources.ts";
+import { slidersOf } from "./slide.ts";
 import { SizeTree } from "./sizeTree.ts";
 import { Triangulation } from "./triangulation.ts";
 import type { MeshRequest, TriangleMesh } from "./types.ts";
@@ -194,7 +196,9 @@ function triangulate(outline: Outline, sides: SideNodes, points: PlacedPoints): 
   mesh.pushAll();
   mesh.settle();
   relax(mesh, size, fixed, RELAX_PASSES);
-  repair({ mesh, size, fixed, room });
+  const work = { mesh, size, fixed, room, sliders: slidersOf(outline, sides) };
+  if (sides.firstRowNode > THIN_SIDE_SHARE * points.count) evenOutThinPart(work);
+  repair(work);
   packTriangles(mesh);
   return mesh;
 }

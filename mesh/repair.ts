@@ -3,8 +3,9 @@
  * edges lose a node and long ones gain one. There is no proof that this ends, so the rounds are bounded; what is
  * left is counted.
  */
-import { LONG_EDGE, REPAIR_ANGLE, REPAIR_ROUNDS, SHORT_EDGE } from "./defaults.ts";
+import { LONG_EDGE, REPAIR_ANGLE, REPAIR_ROUNDS, SHORT_EDGE, THIN_PASSES } from "./defaults.ts";
 import { removeNode, splitEdge } from "./editTriangles.ts";
+import { slideNode, type Sliders } from "./slide.ts";
 import { next, previous, type Triangulation } from "./triangulation.ts";
 
 /** What repair works on; `size` and `fixed` have room for the nodes it adds. */
@@ -14,6 +15,7 @@ export interface RepairWork {
   readonly fixed: Uint8Array;
   /** most nodes */
   readonly room: number;
+  readonly sliders: Sliders;
 }
 
 const BAR = Math.sin(REPAIR_ANGLE) / Math.sin(Math.PI / 3);
@@ -75,7 +77,11 @@ export function shapeOf(xy: Float64Array, a: number, b: number, c: number): numb
 }
 
 /** Lifts the nodes of poor triangles and those up to so many edges away. */
-function liftAround({ mesh, size, fixed }: RepairWork, poor: readonly number[], rings: number): void {
+function liftAround(
+  { mesh, size, fixed, sliders }: RepairWork,
+  poor: readonly number[],
+  rings: number,
+): void {
   let movable = new Set<number>(poor);
   for (let k = 0; k < rings; k++) {
     const wider = new Set(movable);
@@ -84,10 +90,57 @@ function liftAround({ mesh, size, fixed }: RepairWork, poor: readonly number[], 
   }
   for (let k = 0; k < 3; k++) {
     let moved = false;
-    for (const v of movable) if (!fixed[v] && liftNode(mesh, v, size[v]!)) moved = true;
+    for (const v of movable) {
+      const isSlider = v < sliders.piece.length && sliders.piece[v]! >= 0;
+      if (isSlider && slideNode(mesh, sliders, v, (star) => worstOf(mesh, v, star))) moved = true;
+      if (!fixed[v] && liftNode(mesh, v, size[v]!)) moved = true;
+    }
     mesh.settle();
     if (!moved) return;
   }
+}
+
+function worstOf({ xy }: Triangulation, v: number, star: readonly number[]): number {
+  let worst = Infinity;
+  for (let i = 0; i < star.length; i += 2) worst = Math.min(worst, shapeOf(xy, v, star[i]!, star[i + 1]!));
+  return worst;
+}
+
+/**
+ * Thin parts have few free nodes: their side nodes slide to raise the mean quality of their stars, free ones are
+ * lifted, flips follow.
+ */
+export function evenOutThinPart({ mesh, size, fixed, sliders }: RepairWork): void {
+  const value = (v: number) => (star: readonly number[]) => {
+    const worst = worstOf(mesh, v, star);
+    return worst <= 0 ? -1 : meanOfStar(mesh, v, star) + 0.5 * Math.min(worst, BAR);
+  };
+  for (let pass = 0; pass < THIN_PASSES; pass++) {
+    for (let v = 0; v < sliders.piece.length; v++) {
+      if (sliders.piece[v]! >= 0 && mesh.leaving[v]! >= 0) slideNode(mesh, sliders, v, value(v));
+    }
+    mesh.settle();
+    for (let v = sliders.piece.length; v < mesh.nodes; v++) {
+      if (!fixed[v] && mesh.leaving[v]! >= 0) liftNode(mesh, v, size[v]!);
+    }
+    mesh.settle();
+  }
+}
+
+/** Mean of 4 sqrt(3) area / (sum of squared sides) over the star. */
+function meanOfStar({ xy }: Triangulation, v: number, star: readonly number[]): number {
+  let sum = 0;
+  for (let i = 0; i < star.length; i += 2) {
+    const b = 2 * star[i]!;
+    const c = 2 * star[i + 1]!;
+    const ux = xy[b]! - xy[2 * v]!;
+    const uy = xy[b + 1]! - xy[2 * v + 1]!;
+    const wx = xy[c]! - xy[2 * v]!;
+    const wy = xy[c + 1]! - xy[2 * v + 1]!;
+    const squares = ux * ux + uy * uy + wx * wx + wy * wy + (wx - ux) ** 2 + (wy - uy) ** 2;
+    sum += (2 * Math.sqrt(3) * (ux * wy - uy * wx)) / squares;
+  }
+  return (2 * sum) / star.length;
 }
 
 const WAYS_X = [1, Math.SQRT1_2, 0, -Math.SQRT1_2, -1, -Math.SQRT1_2, 0, Math.SQRT1_2];

@@ -24,6 +24,9 @@ export interface SideNodes {
   readonly hands: number[];
   /** number of the first chord of each piece; its chords follow each other from its a to its b */
   readonly firstChord: number[];
+  /** inner nodes of each piece from its a to its b, and their shares of the piece */
+  readonly piecesNodes: readonly (readonly number[])[];
+  readonly piecesShares: readonly (readonly number[])[];
   /** nodes from here on belong to rows */
   readonly firstRowNode: number;
   /** pairs of nodes: edges inside the rows, which must be edges of the mesh */
@@ -50,6 +53,8 @@ export function placeSideNodes(
     hands: [] as number[],
     firstChord: [] as number[],
     rowEdges: [] as number[],
+    piecesNodes: [] as number[][],
+    piecesShares: [] as number[][],
   };
   const firstStep = Float64Array.from(outline.x, (x, v) => tree.sizeAt(x, outline.y[v]!));
   outline.pieces.forEach((piece, k) => {
@@ -58,18 +63,21 @@ export function placeSideNodes(
       ...shells(piece, tree, from.sharpest[piece.b]!, firstStep[piece.b]!, true),
       ...(rowStops[k] ?? []),
     ].sort((s, t) => s - t);
-    placeOnPiece(nodes, piece, k, spacedShares(piece, stops, tree));
+    const shares = spacedShares(piece, stops, tree);
+    nodes.piecesShares.push(shares);
+    nodes.piecesNodes.push(placeOnPiece(nodes, piece, k, shares));
   });
   return { ...nodes, firstRowNode: nodes.x.length };
 }
 
 function placeOnPiece(
-  nodes: Omit<SideNodes, "firstRowNode">,
+  nodes: Pick<SideNodes, "x" | "y" | "from" | "to" | "piece" | "hands" | "firstChord">,
   piece: Piece,
   k: number,
   shares: readonly number[],
-): void {
+): number[] {
   const p = [0, 0];
+  const first = nodes.x.length;
   const hands = (piece.left >= 0 ? LEFT_HAND : 0) | (piece.right >= 0 ? RIGHT_HAND : 0);
   let last = piece.a;
   nodes.firstChord.push(nodes.from.length);
@@ -86,6 +94,7 @@ function placeOnPiece(
     chordTo(nodes.x.push(p[0]!) - 1);
   }
   chordTo(piece.b);
+  return shares.map((_, i) => first + i);
 }
 
 /**
