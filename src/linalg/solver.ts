@@ -33,6 +33,8 @@ export interface HeldMatrix {
   refresh(values: Float64Array): void;
   /** out = A x; `out` must not be `x` */
   multiply(x: Float64Array, out: Float64Array): Float64Array;
+  /** give its room back to the solver; dead afterwards */
+  release(): void;
 }
 
 /** What is needed to solve with one matrix. Vectors in the inner numbering. */
@@ -53,6 +55,8 @@ export interface Factor {
    * @returns iterations spent
    */
   solveProduct(matrix: HeldMatrix, x: Float64Array, extra: Float64Array, out: Float64Array): number;
+  /** give its room back to the solver; dead afterwards */
+  release(): void;
 }
 
 export interface SparseSolver {
@@ -114,6 +118,7 @@ export function conjugateGradientsSolver(
           for (let i = 0; i < b.length; i++) b[i]! += extra[i]!;
           return conjugateGradients(inner.pattern, own, b, preconditioner, work, aim, out);
         },
+        release: nothing,
       };
     },
     matrix() {
@@ -121,13 +126,15 @@ export function conjugateGradientsSolver(
       return {
         refresh: (values) => own.set(values),
         multiply: (x, out) => multiply(inner.pattern, own, x, out),
+        release: nothing,
       };
     },
-    release() {
-      // Plain arrays: the garbage collector takes them.
-    },
+    release: nothing,
   };
 }
+
+/** Plain arrays need no giving back: the garbage collector takes them. */
+const nothing = () => undefined;
 
 /**
  * Analyse a pattern for solving. Coordinates (2 per unknown) are used for ordering only; without them the graph

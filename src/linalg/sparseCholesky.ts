@@ -29,6 +29,9 @@ export function choleskySolver(pattern: SparsityPattern, coordinates: Float64Arr
   const inner = innerPattern(instance, size, pattern.columns.length);
   // One buffer for values on their way in: they are used up at once.
   const values = kernels.allocateReals(pattern.columns.length);
+  // Room that was given back, to be used again: kernel memory itself cannot be freed piecemeal.
+  const idleFactors: number[] = [];
+  const idleMatrices: number[] = [];
   let live = true;
   const ensureLive = () => {
     if (!live) throw new Error("the solver was released");
@@ -40,11 +43,11 @@ export function choleskySolver(pattern: SparsityPattern, coordinates: Float64Arr
     facts: { factorEntries: kernels.factorEntries.value, factorWork: kernels.factorWork.value },
     factor() {
       ensureLive();
-      return choleskyFactor(instance, size, values, numbering, ensureLive);
+      return choleskyFactor(instance, size, values, numbering, ensureLive, idleFactors);
     },
     matrix() {
       ensureLive();
-      return kernelMatrix(instance, size, pattern.columns.length, ensureLive);
+      return kernelMatrix(instance, size, pattern.columns.length, ensureLive, idleMatrices);
     },
     release() {
       if (live) giveBackInstance(instance);
@@ -90,12 +93,14 @@ function choleskyFactor(
   valueBuffer: number,
   { outerOf }: Numbering,
   ensureLive: () => void,
+  idle: number[],
 ): Factor {
   const kernels = instance.exports;
-  const factor = kernels.newFactor();
+  const factor = idle.pop() ?? kernels.newFactor();
   const workX = kernels.workX.value;
   const workY = kernels.workY.value;
   let filled = false;
+  let released = false;
   const ensureFilled = () => {
     ensureLive();
     if (!filled) throw new Error("the factor holds no matrix yet");
@@ -103,6 +108,7 @@ function choleskyFactor(
   return {
     refresh(values) {
       ensureLive();
+      if (released) throw new Error("the factor was released");
       instance.reals(valueBuffer, values.length).set(values);
       filled = kernels.factorize(factor, valueBuffer, SINGULAR_PIVOT) !== 0;
       if (!filled)
@@ -130,6 +136,11 @@ function choleskyFactor(
       out.set(work);
       return 1;
     },
+    release() {
+      filled = false;
+      if (!released) idle.push(factor);
+      released = true;
+    },
   };
 }
 
@@ -138,9 +149,10 @@ function kernelMatrix(
   size: number,
   entries: number,
   ensureLive: () => void,
+  idle: number[],
 ): KernelMatrix {
   const kernels = instance.exports;
-  const pointer = kernels.allocateReals(entries);
+  const pointer = idle.pop() ?? kernels.allocateReals(entries);
   const workX = kernels.workX.value;
   const workY = kernels.workY.value;
   return {
@@ -157,6 +169,9 @@ function kernelMatrix(
       kernels.multiplyAdd(pointer, workX, workY, workY);
       out.set(product);
       return out;
+    },
+    release() {
+      idle.push(pointer);
     },
   };
 }

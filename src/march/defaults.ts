@@ -29,22 +29,30 @@ export const FACTORS_KEPT = 2;
 
 /** Numbers of the Krylov march, from the study described in DEVELOPERS.md [krylov]. */
 export const KRYLOV = {
-  /** shift g as a share of the segment: smaller where early instants matter */
+  /** shift g as a share of the span: smaller where early instants matter */
   shiftEarly: 0.005,
   shiftLate: 0.01,
-  /** a first instant beyond this share of the segment counts as late */
+  /** a first instant beyond this share of the span counts as late */
   lateShare: 0.01,
+  /** a kept basis serves when its shift is within this factor of the one wished for */
+  shiftSlack: 2,
   /** vectors before the first check, and between two checks */
   leastVectors: 10,
   checkEvery: 5,
-  /** beyond this the three-term recursion begins to lose digits, and parting the stage is cheaper */
+  /** beyond this a second basis for the early instants is cheaper than more vectors */
   vectorsBeforeParting: 40,
+  /** beyond this the three-term recursion begins to lose digits */
   mostVectors: 60,
-  /** where a segment is parted, as a share of it, and how many segments a stage may have */
-  partAt: 1e-3,
-  mostSegments: 4,
-  /** first instant that has to be right in a segment that begins later, as a share of it */
-  earlyShare: 1e-3,
+  /** parting pays when the second basis has at most this share of the span left to serve */
+  worthParting: 0.3,
+  /** bases one behind the other, each for earlier instants than the one before */
+  mostSpans: 5,
+  /** factors kept of one system, one per shift; at least `mostSpans` */
+  layersKept: 6,
+  /** knots behind which the error is looked at; more are sampled */
+  mostKnotsChecked: 16,
+  /** stated error over estimated error: the estimate is within a factor of two of the truth */
+  safety: 2,
   /** a next Lanczos vector this short means that the basis is exact */
   breakdown: 1e-14,
   /** rounding can make an eigenvalue 0 or negative */

@@ -1,54 +1,59 @@
-/** The march of a stage by Krylov segments, at any instant of it. */
-import { toOuter } from "../linalg/numbering.ts";
-import type { Numbering } from "../linalg/numbering.ts";
-import type { InnerSystem } from "./innerSystem.ts";
+/** The history of a Krylov march: any instant is a combination of basis vectors. */
+import { toOuter, type Numbering } from "../linalg/numbering.ts";
+import { setHeld, type InnerSystem } from "./innerSystem.ts";
+import type { KrylovAnswer } from "./krylovBasis.ts";
 import { signalIntegral } from "./signals.ts";
 import type { MarchFacts, Signal, StageHistory } from "./types.ts";
 
-/** A stretch of the stage with its own start and bases; times of the stage, vectors in the inner numbering. */
-export interface KrylovSegment {
+/** Answers that hold from one instant to another; all of them count from time 0. */
+export interface KrylovSpan {
   readonly from: number;
   readonly to: number;
-  fieldAt(time: number, out: Float64Array): Float64Array;
-  /** out += integral over [from, time] of the unknowns that are not held */
-  integralAt(time: number, out: Float64Array): Float64Array;
+  readonly answers: readonly KrylovAnswer[];
 }
 
 export class KrylovHistory implements StageHistory {
-  readonly times: Float64Array;
   private readonly inner: Float64Array;
 
+  /**
+   * @param start  inner numbers, held unknowns at their held values of time 0
+   * @param spans  from the latest to the earliest, together 0 to the duration
+   */
   constructor(
     private readonly numbering: Numbering,
-    private readonly system: InnerSystem,
-    private readonly segments: readonly KrylovSegment[],
-    duration: number,
+    private readonly held: InnerSystem["held"],
+    private readonly start: Float64Array,
+    private readonly spans: readonly KrylovSpan[],
+    readonly times: Float64Array,
     readonly facts: MarchFacts,
   ) {
-    this.times = Float64Array.of(0, ...segments.slice(0, -1).map((segment) => segment.to), duration);
-    this.inner = new Float64Array(system.pattern.size);
+    this.inner = new Float64Array(start.length);
   }
 
   at(time: number, out: Float64Array): Float64Array {
-    const segment = this.segments.find((each) => time <= each.to) ?? this.segments.at(-1)!;
-    return toOuter(this.numbering, segment.fieldAt(time, this.inner), out);
+    const { inner } = this;
+    inner.set(this.start);
+    if (time > 0) for (const answer of this.spanAt(time).answers) answer.addField(time, inner);
+    return toOuter(this.numbering, setHeld(this.held, time, inner), out);
   }
 
-  /** Exact for any instant, not only those of `times`. */
+  /** Balanced to rounding at any instant, not only those of `times`. */
   integral(time: number, out: Float64Array): Float64Array {
-    this.inner.fill(0);
-    for (const segment of this.segments) {
-      if (segment.from >= time) break;
-      segment.integralAt(Math.min(time, segment.to), this.inner);
-    }
-    for (const { unknowns, signal } of this.system.held) {
+    const { inner, start } = this;
+    for (let i = 0; i < inner.length; i++) inner[i] = time * start[i]!;
+    if (time > 0) for (const answer of this.spanAt(time).answers) answer.addIntegral(time, inner);
+    for (const { unknowns, signal } of this.held) {
       const value = signalIntegral(signal, time);
-      for (const i of unknowns) this.inner[i] = value;
+      for (const i of unknowns) inner[i] = value;
     }
-    return toOuter(this.numbering, this.inner, out);
+    return toOuter(this.numbering, inner, out);
   }
 
   signalIntegral(signal: Signal, time: number): number {
     return signalIntegral(signal, time);
+  }
+
+  private spanAt(time: number): KrylovSpan {
+    return this.spans.find(({ from }) => time > from) ?? this.spans[this.spans.length - 1]!;
   }
 }

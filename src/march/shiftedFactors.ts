@@ -35,6 +35,12 @@ export class ShiftedFactors {
     return x;
   }
 
+  /** give the room of all factors back */
+  release(): void {
+    for (const { factor } of this.kept) factor.release();
+    this.kept.length = 0;
+  }
+
   private factorFor(weight: number): Factor {
     const found = this.kept.find((entry) => Math.abs(entry.weight - weight) <= SAME_INSTANT * weight);
     if (found) {

@@ -3,6 +3,8 @@
  * an array of rows.
  */
 import type { SparsityPattern } from "../../src/linalg/pattern.ts";
+import { signalAt } from "../../src/march/signals.ts";
+import type { LinearSystem, Signal } from "../../src/march/types.ts";
 
 export type Dense = number[][];
 
@@ -148,4 +150,54 @@ function backward(l: Dense, b: readonly number[]): number[] {
     x[i]! /= l[i]![i]!;
   }
   return x;
+}
+
+/**
+ * Exact solution of a linear stage, knots of the signals and held unknowns included: from knot to knot by eigenvectors.
+ * Held unknowns start at their held value.
+ */
+export function denseMarch(system: LinearSystem, start: ArrayLike<number>): (time: number) => number[] {
+  const n = system.pattern.size;
+  const c = denseOf(system.pattern, system.capacity);
+  const k = denseOf(system.pattern, system.conductance);
+  const held = new Map<number, Signal>();
+  for (const { unknowns, signal } of system.held) for (const i of unknowns) held.set(i, signal);
+  const free = Array.from({ length: n }, (_, i) => i).filter((i) => !held.has(i));
+  const part = (a: Dense) => free.map((i) => free.map((j) => a[i]![j]!));
+  const evolve = denseEvolution(part(c), part(k));
+  const all = [...system.loads, ...system.held].flatMap(({ signal }) => [...signal.times]);
+  const knots = [0, ...new Set(all.filter((time) => time > 0))].sort((a, b) => a - b);
+  const slopeOf = (signal: Signal, from: number) => {
+    const next = signal.times.find((time) => time > from);
+    return next === undefined || signal.times[0]! > from
+      ? 0
+      : (signalAt(signal, next) - signalAt(signal, from)) / (next - from);
+  };
+  /** constant and slope of the free right-hand sides from a knot on */
+  const loadsFrom = (from: number) => {
+    const constant = new Array<number>(free.length).fill(0);
+    const slope = new Array<number>(free.length).fill(0);
+    free.forEach((i, row) => {
+      for (const { vector, signal } of system.loads) {
+        constant[row]! += vector[i]! * signalAt(signal, from);
+        slope[row]! += vector[i]! * slopeOf(signal, from);
+      }
+      for (const [j, signal] of held) {
+        constant[row]! -= k[i]![j]! * signalAt(signal, from) + c[i]![j]! * slopeOf(signal, from);
+        slope[row]! -= k[i]![j]! * slopeOf(signal, from);
+      }
+    });
+    return { constant, slope };
+  };
+  return (time) => {
+    let u = free.map((i) => start[i]!);
+    for (let q = 0; q < knots.length && (q === 0 || knots[q]! < time); q++) {
+      const { constant, slope } = loadsFrom(knots[q]!);
+      u = evolve(u, constant, slope, Math.min(time, knots[q + 1] ?? Infinity) - knots[q]!);
+    }
+    const out = new Array<number>(n).fill(0);
+    free.forEach((i, row) => (out[i] = u[row]!));
+    for (const [i, signal] of held) out[i] = signalAt(signal, time);
+    return out;
+  };
 }
