@@ -25,6 +25,7 @@ export function checkMesh(mesh: TriangleMesh, request: MeshRequest): string[] {
   if (report.faults.length > 0) return report.faults;
   const table = edgeTable(mesh);
   const size = extentOf(request.regions).size;
+  checkNodesUsed(mesh, report);
   checkTriangles(mesh, report);
   checkEdges(mesh, table, report);
   checkHangingNodes(mesh, table, size, report);
@@ -56,7 +57,10 @@ function checkArrays(mesh: TriangleMesh, report: Report): void {
   if (mesh.nodes.some((v) => !Number.isFinite(v))) report.add("number", "a node's place is not a number");
   if (mesh.triangles.some((v) => v >= nodes)) report.add("node number", "a triangle's corner does not exist");
   if (mesh.edges.some((v) => v >= nodes)) report.add("node number", "a side edge's end does not exist");
-  const used = new Uint8Array(nodes);
+}
+
+function checkNodesUsed(mesh: TriangleMesh, report: Report): void {
+  const used = new Uint8Array(mesh.nodes.length / 2);
   for (const v of mesh.triangles) used[v] = 1;
   used.forEach((u, v) => {
     if (!u) report.add("unused node", `${v}`);

@@ -68,7 +68,13 @@ export function removeNode(mesh: Triangulation, v: number): boolean {
     }
     const turned = bestSpoke(mesh, v, spokes);
     if (turned < 0) return false;
+    const across = twin[turned]!;
     mesh.flip(turned);
+    for (const e of [turned, across]) {
+      mesh.push(e);
+      mesh.push(next(e));
+      mesh.push(previous(e));
+    }
   }
   return false;
 

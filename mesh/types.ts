@@ -21,6 +21,9 @@ export interface OutlineRegion {
 /**
  * Rows of elements laid parallel to one side, for the thin layer in which a film first acts.
  * `side` counts the sides of all regions in order: region, loop, side.
+ *
+ * Rows are added while they are thinner than the triangles beside them. Where sides with rows meet, the finer of
+ * their schedules holds for both. Rows that would take more than half of the nodes are all made thicker.
  */
 export interface SideRows {
   readonly side: number;

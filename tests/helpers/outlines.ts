@@ -232,3 +232,18 @@ export function mapOutline(regions: readonly OutlineRegion[], f: (p: Point) => P
     ),
   }));
 }
+
+/** Rows of one schedule on every side that does not lie along the axis. */
+export function rowsEverywhere(
+  regions: readonly OutlineRegion[],
+  thickness: number,
+  growth = 2,
+): { side: number; thickness: number; growth: number }[] {
+  const isOnAxis = ({ from, to, through }: OutlineSide) =>
+    Math.abs(from[0]) < 1e-12 && Math.abs(to[0]) < 1e-12 && (!through || Math.abs(through[0]) < 1e-12);
+  return regions
+    .flatMap(({ loops }) => loops.flat())
+    .map((side, k) => ({ side: k, thickness, growth, skip: isOnAxis(side) }))
+    .filter(({ skip }) => !skip)
+    .map(({ side }) => ({ side, thickness, growth }));
+}
