@@ -9,7 +9,7 @@ import { readCase } from "./case/readCase.ts";
 import type { MaterialLibrary } from "./case/readCase.ts";
 import type { Case, CaseProblem } from "./case/types.ts";
 import { buildProfile } from "./profile/buildProfile.ts";
-import { outlineProblems } from "./profile/outlineProblems.ts";
+import { outlineHints, outlineProblems } from "./profile/outlineProblems.ts";
 import type { Profile } from "./profile/types.ts";
 import { linearElements, quadraticElements } from "./fem/elementMesh.ts";
 import type { ElementOrder } from "./fem/elementMesh.ts";
@@ -76,12 +76,15 @@ export function checkDocument(
   const input = reading.case;
   const profile = buildProfile(input);
   const points = input.probes.map((probe) => probe.at);
+  const findings = findOutlineFaults(profile.regions, points);
   const problems = [
-    ...outlineProblems(findOutlineFaults(profile.regions, points), input),
+    ...outlineProblems(findings, input),
     ...conditionProblems(input, profile.sides),
     ...unsupportedFields(input),
   ];
-  return problems.length > 0 ? { problems } : { input, profile, warnings: reading.warnings };
+  if (problems.length > 0) return { problems };
+  const hints = outlineHints(findings, input).map(({ message, mend }) => `${message} ${mend}`);
+  return { input, profile, warnings: [...reading.warnings, ...hints] };
 }
 
 /** Solves on a coarse mesh, then on its refinements, until the stated uncertainties meet the case's accuracy. */
