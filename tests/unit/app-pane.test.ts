@@ -319,7 +319,7 @@ describe("verdict and faults", () => {
     });
   });
 
-  test("a fault stands at its blank, in the section or in the list, never twice", () => {
+  test("a fault stands on the card, at its blank, in the section or in the list", () => {
     const fault = (path: string, places?: readonly (readonly [number, number])[]) => ({
       code: "x",
       path,
@@ -328,6 +328,7 @@ describe("verdict and faults", () => {
       ...(places ? { places } : {}),
     });
     const problems = [
+      fault("stages"),
       fault("questions[1].reaches"),
       fault("part.regions[0].outline[2].at", [[0, 1]]),
       fault("materials.steel.density"),

@@ -199,9 +199,9 @@ export class CorelagAnswers extends LitElement {
   private faults(): TemplateResult | typeof nothing {
     const told = faultsToTell(this.problems);
     if (told.length === 0) return nothing;
-    return html`<div class="verdict bad faults" role="alert">
+    return html`<div class="verdict bad faults" role="status">
       <h2>
-        ${icon("bad")}${told.length === 1 ? "This has to be mended first" : `${told.length} things have to be mended first`}
+        ${icon("bad")}${told.length === 1 ? "This has to be mended as well" : `${told.length} more things have to be mended`}
       </h2>
       <ul>
         ${told.map(({ message, mend, path }) => html`<li title=${path}><b>${message}</b> ${mend}</li>`)}

@@ -35,12 +35,14 @@ export function failureBand(failure: RunFailure): Band {
   return { tone: "bad", heading: "It could not be worked out", text: `${failure.message} ${failure.mend}` };
 }
 
-/** Faults that have no place in the section are told here; the others stand where they are. */
+/**
+ * Faults to be told in the pane: the first stands on its card over the section, those of questions at their blanks;
+ * all others without a place of their own are listed here.
+ */
 export function faultsToTell(problems: readonly CaseProblem[]): CaseProblem[] {
-  return problems.filter(
-    (problem) =>
-      (problem.places === undefined || problem.places.length === 0) && !problem.path.startsWith("questions["),
-  );
+  return problems
+    .slice(1)
+    .filter(({ places = [], path }) => places.length === 0 && !path.startsWith("questions["));
 }
 
 /** Fault of one field of one question, by its path "questions[2].reaches". */

@@ -1,0 +1,67 @@
+import { readFile } from "node:fs/promises";
+import { expect, test } from "@playwright/test";
+import { unzipSync } from "fflate";
+import { expectAccessible, nameState, openQuick } from "../helpers/quickPage.ts";
+
+test.beforeEach(async ({ page }) => {
+  await nameState(page);
+  await openQuick(page);
+});
+
+test("the words of the pane are tabs, walked with the arrow keys", async ({ page }) => {
+  await page.getByRole("tab", { name: "Answers" }).focus();
+  await page.keyboard.press("ArrowRight");
+  await expect(page.getByRole("tab", { name: "Proof" })).toBeFocused();
+  await expect(page.getByRole("tabpanel", { name: "Proof" })).toContainText("sharpest corner");
+  await page.keyboard.press("End");
+  await expect(page.getByRole("tabpanel", { name: "Hand-over" })).toBeVisible();
+});
+
+test("the proof is accessible and says what was kept", async ({ page }) => {
+  await page.getByRole("tab", { name: "Proof" }).click();
+  await expect(page.getByText(/no value outside 60\s°C to 850\s°C/)).toBeVisible();
+  await expect(page.locator("corelag-proof .broken")).toHaveCount(0);
+  await expectAccessible(page, "corelag-pane");
+});
+
+test("curves are saved as CSV, named after the case", async ({ page }) => {
+  await page.getByRole("tab", { name: "Hand-over" }).click();
+  await expectAccessible(page, "corelag-pane");
+  const saving = page.waitForEvent("download");
+  await page.getByRole("button", { name: "Save: Curves" }).click();
+  const file = await saving;
+  expect(file.suggestedFilename()).toBe("quick-bar-curves.csv");
+  const text = await readFile(await file.path(), "utf8");
+  expect(text.split("\n")[0]).toContain("time_s,core_degC");
+});
+
+test("snapshots come with the series that names their times", async ({ page }) => {
+  await page.getByRole("tab", { name: "Hand-over" }).click();
+  const saving = page.waitForEvent("download");
+  await page.getByRole("button", { name: "Save: Field snapshots" }).click();
+  const files = unzipSync(new Uint8Array(await readFile(await (await saving).path())));
+  const names = Object.keys(files);
+  expect(names.filter((name) => name.endsWith(".pvd"))).toEqual(["quick-bar.pvd"]);
+  expect(names.filter((name) => name.endsWith(".vtu")).length).toBeGreaterThan(10);
+});
+
+test("results of an earlier case cannot be handed over", async ({ page }) => {
+  await page.getByRole("tab", { name: "Hand-over" }).click();
+  await page.evaluate(() => {
+    const state = appState() as unknown as { edit(label: string, recipe: (draft: never) => void): void };
+    state.edit("density", (draft: { materials: { steel: { density: number } } }) => {
+      draft.materials.steel.density = -1;
+    });
+  });
+  await expect(page.getByRole("button", { name: "Save: Curves" })).toBeDisabled();
+  await expect(page.getByRole("button", { name: "Save: Case file" })).toBeEnabled();
+  await expect(page.getByText("Results can be saved once the case on the sheet is sound")).toBeVisible();
+});
+
+test("an empty sheet tells three things to know", async ({ page }) => {
+  await page.evaluate(() => (appState() as unknown as { clear(): void }).clear());
+  await expect(page.getByRole("heading", { name: "Three things to know" })).toBeVisible();
+  await expectAccessible(page, "corelag-pane");
+  await page.getByRole("button", { name: "Look at a solved ingot" }).click();
+  await expect(page.getByRole("article").first()).toBeVisible();
+});
