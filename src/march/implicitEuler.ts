@@ -21,10 +21,11 @@ import {
   SHORTEST_STEP_POWER,
   STEP_SHARE_OF_REMAINDER,
 } from "./defaults.ts";
-import { addLoads, imposeHeld, innerSystem, setHeld, signalsOf, type InnerSystem } from "./innerSystem.ts";
+import { freeRows, innerSystem, setHeld, signalsOf, type InnerSystem } from "./innerSystem.ts";
 import { heldMatrix, ShiftedFactors } from "./shiftedFactors.ts";
 import { knotsWithin } from "./signals.ts";
 import { SteppedHistory } from "./steppedHistory.ts";
+import { StepLoads } from "./stepLoads.ts";
 import type { MarchFacts, MarchOptions, Scheme } from "./types.ts";
 import { createWorkspace } from "./workspace.ts";
 
@@ -48,37 +49,27 @@ export const implicitEuler: Scheme = function* (system, start, options) {
       setHeld(inner.held, 0, toInner(solver.numbering, start, start.slice())),
       options,
     );
-    while (!march.finished) {
-      march.step();
-      yield { fraction: march.time / options.duration, soFar: () => march.history() };
+    try {
+      while (!march.finished) {
+        march.step();
+        yield { fraction: march.time / options.duration, soFar: () => march.history() };
+      }
+      return march.history();
+    } finally {
+      march.release();
+      factors.release();
     }
-    return march.history();
   } finally {
     if (!options.workspace) workspace.release();
   }
 };
 
-/** One implicit Euler step: solves (C + step K) u = C from + step * loads at the end of the step. */
-export function eulerStep(
-  system: InnerSystem,
-  capacity: HeldMatrix,
-  factors: ShiftedFactors,
-  step: number,
-  endTime: number,
-  from: Float64Array,
-  work: Float64Array,
-  out: Float64Array,
-): Float64Array {
-  capacity.multiply(from, work);
-  addLoads(system, endTime, step, work);
-  imposeHeld(system, endTime, step, work);
-  return factors.solve(step, work, out);
-}
-
 class EulerMarch {
   time = 0;
   finished = false;
+  /** C with zero rows for held unknowns */
   private readonly capacity: HeldMatrix;
+  private readonly loads: StepLoads;
   private readonly kept: SteppedHistory;
   private readonly knots: number[];
   private readonly firstInstant: number;
@@ -95,11 +86,11 @@ class EulerMarch {
   private readonly whole: Float64Array;
   private readonly error: Float64Array;
   private readonly carried: Float64Array;
-  private readonly work: Float64Array;
+  private readonly nothing: Float64Array;
   private readonly outer: Float64Array;
 
   constructor(
-    private readonly system: InnerSystem,
+    system: InnerSystem,
     private readonly solver: SparseSolver,
     private readonly factors: ShiftedFactors,
     start: Float64Array,
@@ -108,8 +99,9 @@ class EulerMarch {
     const vector = () => new Float64Array(start.length);
     this.u = start;
     [this.halfway, this.next, this.whole, this.error] = [vector(), vector(), vector(), vector()];
-    [this.carried, this.work, this.outer] = [vector(), vector(), vector()];
-    this.capacity = heldMatrix(solver, system.capacity);
+    [this.carried, this.nothing, this.outer] = [vector(), vector(), vector()];
+    this.capacity = heldMatrix(solver, freeRows(system, system.capacity, false));
+    this.loads = new StepLoads(system, FACTORS_KEPT);
     this.kept = new SteppedHistory(solver.numbering, system, start);
     this.knots = knotsWithin(signalsOf(system), options.duration);
     this.firstInstant =
@@ -140,6 +132,10 @@ class EulerMarch {
     }
   }
 
+  release(): void {
+    this.capacity.release();
+  }
+
   history() {
     const { factors } = this;
     const facts: MarchFacts = {
@@ -156,13 +152,14 @@ class EulerMarch {
 
   /** Whole step and two halves; @returns the largest difference, which is the local error of the halves */
   private tryStep(step: number, endTime: number): number {
-    const { system, capacity, factors, u, whole, halfway, next, work } = this;
+    const { capacity, factors, loads, u, whole, halfway, next } = this;
+    const half = step / 2;
     whole.set(u);
-    eulerStep(system, capacity, factors, step, endTime, u, work, whole);
+    factors.solveProduct(step, capacity, u, loads.at(step, endTime), whole);
     for (let i = 0; i < u.length; i++) halfway[i] = 0.5 * (u[i]! + whole[i]!);
-    eulerStep(system, capacity, factors, step / 2, endTime - step / 2, u, work, halfway);
+    factors.solveProduct(half, capacity, u, loads.at(half, endTime - half), halfway);
     next.set(whole);
-    eulerStep(system, capacity, factors, step / 2, endTime, halfway, work, next);
+    factors.solveProduct(half, capacity, halfway, loads.at(half, endTime), next);
     return largestDifference(whole, next);
   }
 
@@ -183,13 +180,11 @@ class EulerMarch {
 
   /** E := F^-1 C E + d, and how fast E would die down by itself. */
   private carryError(step: number, endTime: number): void {
-    const { error, carried, work, whole, next } = this;
+    const { error, carried, whole, next } = this;
     const before = largestMagnitude(error);
     if (before > 0) {
-      this.capacity.multiply(error, work);
-      for (const { unknowns } of this.system.held) for (const i of unknowns) work[i] = 0;
       carried.set(error);
-      this.factors.solve(step, work, carried);
+      this.factors.solveProduct(step, this.capacity, error, this.nothing, carried);
       this.relaxation = Math.max(0, 1 - largestMagnitude(carried) / before) / step;
     } else carried.fill(0);
     for (let i = 0; i < error.length; i++) error[i] = carried[i]! + whole[i]! - next[i]!;

@@ -57,44 +57,13 @@ export function innerSystem(system: LinearSystem, solver: SparseSolver): InnerSy
   return { pattern: inner.pattern, capacity, conductance, loads, held, heldMask };
 }
 
-/** out += factor * (sum of a_g(time) p_g) on the free rows; held rows are left for `imposeHeld`. */
-export function addLoads(system: InnerSystem, time: number, factor: number, out: Float64Array): Float64Array {
-  for (const { vector, signal } of system.loads) {
-    const weight = factor * signalAt(signal, time);
-    if (weight === 0) continue;
-    for (let i = 0; i < out.length; i++) out[i]! += weight * vector[i]!;
-  }
-  return out;
-}
-
-/**
- * Right-hand side of (C + conductanceWeight K) u = b at `time`: couplings to held unknowns moved over, rows of held
- * unknowns set to diagonal times held value.
- */
-export function imposeHeld(
-  system: InnerSystem,
-  time: number,
-  conductanceWeight: number,
-  out: Float64Array,
-): Float64Array {
-  for (const { signal, capacityColumn, conductanceColumn } of system.held) {
-    const value = signalAt(signal, time);
-    if (value === 0) continue;
-    for (let i = 0; i < out.length; i++)
-      out[i]! -= value * (capacityColumn[i]! + conductanceWeight * conductanceColumn[i]!);
-  }
-  for (const { unknowns, signal } of system.held) {
-    const value = signalAt(signal, time);
-    for (const i of unknowns) out[i] = value * heldDiagonal(system, i, conductanceWeight);
-  }
-  return out;
-}
+export const heldValue = ({ signal }: InnerHeld, time: number): number => signalAt(signal, time);
 
 /** Set the held unknowns of `out` to their values at `time`. */
 export function setHeld(held: InnerSystem["held"], time: number, out: Float64Array): Float64Array {
-  for (const { unknowns, signal } of held) {
-    const value = signalAt(signal, time);
-    for (const i of unknowns) out[i] = value;
+  for (const group of held) {
+    const value = heldValue(group, time);
+    for (const i of group.unknowns) out[i] = value;
   }
   return out;
 }
@@ -112,7 +81,7 @@ export function shiftedMatrix(
 }
 
 /** Zero the entries outside the diagonal that lie in a row or a column of a marked unknown. */
-export function decouple(pattern: SparsityPattern, mask: Uint8Array, out: Float64Array): Float64Array {
+function decouple(pattern: SparsityPattern, mask: Uint8Array, out: Float64Array): Float64Array {
   const { size, rowStart, columns } = pattern;
   for (let row = 0; row < size; row++)
     for (let q = rowStart[row]!; q < rowStart[row + 1]!; q++) {
@@ -122,17 +91,23 @@ export function decouple(pattern: SparsityPattern, mask: Uint8Array, out: Float6
   return out;
 }
 
+/** A copy of the values with zero rows (and with `columnsToo` zero columns) where unknowns are held. */
+export function freeRows(system: InnerSystem, values: Float64Array, columnsToo: boolean): Float64Array {
+  const { pattern, heldMask } = system;
+  const out = values.slice();
+  if (!heldMask) return out;
+  for (let row = 0; row < pattern.size; row++)
+    for (let q = pattern.rowStart[row]!; q < pattern.rowStart[row + 1]!; q++)
+      if (heldMask[row] || (columnsToo && heldMask[pattern.columns[q]!])) out[q] = 0;
+  return out;
+}
+
 /** Every signal that drives the system. */
 export function signalsOf(system: {
   readonly loads: readonly { readonly signal: Signal }[];
   readonly held: readonly { readonly signal: Signal }[];
 }): Signal[] {
   return [...system.loads, ...system.held].map(({ signal }) => signal);
-}
-
-function heldDiagonal({ pattern, capacity, conductance }: InnerSystem, i: number, weight: number): number {
-  const place = pattern.diagonal[i]!;
-  return capacity[place]! + weight * conductance[place]!;
 }
 
 function maskOfHeld(system: LinearSystem, innerOf: Int32Array): Uint8Array | undefined {

@@ -6,7 +6,7 @@
 import type { Factor, HeldMatrix, SparseSolver } from "../linalg/solver.ts";
 import { toInner } from "../linalg/numbering.ts";
 import { KRYLOV } from "./defaults.ts";
-import { decouple, innerSystem, shiftedMatrix, type InnerSystem } from "./innerSystem.ts";
+import { freeRows, innerSystem, shiftedMatrix, type InnerSystem } from "./innerSystem.ts";
 import { KrylovBasis, type KrylovOperator } from "./krylovBasis.ts";
 import type { LinearSystem } from "./types.ts";
 import type { WorkCounts } from "./workspace.ts";
@@ -46,7 +46,7 @@ export class KrylovSystem {
     this.matrices = innerSystem({ ...source, loads: [] }, solver);
     this.values = this.matrices.capacity.slice();
     this.capacity = solver.matrix();
-    this.capacity.refresh(withoutHeld(this.matrices, this.values));
+    this.capacity.refresh(freeRows(this.matrices, this.matrices.capacity, true));
   }
 
   /** Whether a system has the matrices and held unknowns of this one. */
@@ -100,13 +100,4 @@ export class KrylovSystem {
     }
     return inner;
   }
-}
-
-/** Capacity with zero rows and columns where unknowns are held. */
-function withoutHeld({ pattern, capacity, heldMask }: InnerSystem, out: Float64Array): Float64Array {
-  out.set(capacity);
-  if (!heldMask) return out;
-  decouple(pattern, heldMask, out);
-  for (let i = 0; i < heldMask.length; i++) if (heldMask[i]) out[pattern.diagonal[i]!] = 0;
-  return out;
 }

@@ -29,16 +29,32 @@ export class ShiftedFactors {
 
   /** Solve (C + weight K) x = b with the held unknowns decoupled; `x` holds a guess on entry. */
   solve(weight: number, b: Float64Array, x: Float64Array): Float64Array {
-    this.linearIterations += this.factorFor(weight).solve(b, x);
-    this.solves++;
-    this.counts.solves++;
+    this.count(this.factorFor(weight).solve(b, x));
     return x;
+  }
+
+  /** out = (C + weight K)^-1 (M x + extra); `out` holds a guess on entry. */
+  solveProduct(
+    weight: number,
+    matrix: HeldMatrix,
+    x: Float64Array,
+    extra: Float64Array,
+    out: Float64Array,
+  ): Float64Array {
+    this.count(this.factorFor(weight).solveProduct(matrix, x, extra, out));
+    return out;
   }
 
   /** give the room of all factors back */
   release(): void {
     for (const { factor } of this.kept) factor.release();
     this.kept.length = 0;
+  }
+
+  private count(iterations: number): void {
+    this.linearIterations += iterations;
+    this.solves++;
+    this.counts.solves++;
   }
 
   private factorFor(weight: number): Factor {
