@@ -53,7 +53,7 @@ export async function solveCase(
   const { input, profile } = checked;
   const kept: { result?: CaseResult } = {};
   try {
-    return await refineUntilSettled(input, profile, [...checked.warnings], options, context, kept);
+    return await refineUntilSettled(input, profile, checked.warnings, options, context, kept);
   } catch (error) {
     if (error instanceof Cancelled) return { kind: "cancelled", ...kept };
     return { kind: "failed", failure: failureOf(error), ...kept };
@@ -91,7 +91,7 @@ export function checkDocument(
 async function refineUntilSettled(
   input: Case,
   profile: Profile,
-  warnings: string[],
+  warnings: readonly string[],
   options: SolveOptions,
   context: RunContext,
   kept: { result?: CaseResult },
@@ -117,30 +117,27 @@ async function refineUntilSettled(
       { ...settings, tolerance: TIME_SHARE * aim },
       context,
     );
-    if (level) levels.push(level);
-    if (level) aim = accuracy * temperatureSpan(input, profile, rangeOf(level));
-    const whole = level?.complete === true;
+    if (!level) return { kind: "cancelled", ...kept };
+    levels.push(level);
+    aim = accuracy * temperatureSpan(input, profile, rangeOf(level));
     const stated = statedUncertainty(levels, element);
     const met = settled(levels, stated, aim);
-    const over = 4 * (levels.at(-1)?.part.start.length ?? 0) > NODE_BUDGET;
-    const last = !whole || met || over || options.nodes !== undefined || options.previewOnly === true;
-    if (levels.length > 0)
-      kept.result = assembleResult({
-        input,
-        profile,
-        levels,
-        element,
-        stated,
-        warnings: [
-          ...warnings,
-          ...(last && whole && over && !met && !options.nodes ? [shortfall(stated.temperature, aim)] : []),
-        ],
-        quality: last && options.previewOnly !== true ? "settled" : "preview",
-        seconds: context.clock() - began,
-      });
-    if (!whole) return { kind: "cancelled", ...kept };
-    if (last) return { kind: "solved", result: kept.result! };
-    context.preview?.(kept.result!);
+    const spent = 4 * level.part.start.length > NODE_BUDGET;
+    const last = met || spent || options.nodes !== undefined || options.previewOnly === true;
+    const short = last && !met && spent && options.nodes === undefined;
+    kept.result = assembleResult({
+      input,
+      profile,
+      levels,
+      element,
+      stated,
+      warnings: short ? [...warnings, shortfall(stated.temperature, aim)] : warnings,
+      quality: last && options.previewOnly !== true ? "settled" : "preview",
+      seconds: context.clock() - began,
+    });
+    if (!level.complete) return { kind: "cancelled", ...kept };
+    if (last) return { kind: "solved", result: kept.result };
+    context.preview?.(kept.result);
     mesh = refineMesh(mesh);
   }
 }

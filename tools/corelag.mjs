@@ -2,12 +2,11 @@
 // The command line from a checkout: builds it when the sources are newer, then hands over.
 import { pathToFileURL } from "node:url";
 import path from "node:path";
-import { buildCommandLine, buildKernels, installPackages, ROOT } from "./prepare.mjs";
+import { buildCommandLine, installPackages, ROOT } from "./prepare.mjs";
 
 // npm runs scripts from the package folder; paths a person types are meant from where they stand.
 const here = process.env.INIT_CWD ?? process.cwd();
 installPackages();
-buildKernels();
 buildCommandLine();
 process.chdir(here);
 await import(pathToFileURL(path.join(ROOT, "dist", "cli", "main.js")).href);

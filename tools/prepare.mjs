@@ -67,12 +67,13 @@ function newest(entry) {
 const SOURCES = ["src", "mesh", "workers", "presets", "package-lock.json", "vite.config.ts", "index.html"];
 
 /** Builds into a folder of its own, then puts it in place, so that two commands at once do not meet half a build. */
-function buildWhenStale(folder, args) {
+function buildWhenStale(folder, args, before = () => undefined) {
   const made = at("dist", folder, ".made");
   const sources = Math.max(
     ...SOURCES.filter((entry) => existsSync(at(entry))).map((entry) => newest(at(entry))),
   );
   if (existsSync(made) && statSync(made).mtimeMs > sources) return;
+  before();
   const fresh = at("dist", `${folder}-${process.pid}`);
   run(
     process.execPath,
@@ -88,9 +89,9 @@ function buildWhenStale(folder, args) {
 }
 
 /** The page in dist/page. */
-export const buildPage = () => buildWhenStale("page", []);
+export const buildPage = () => buildWhenStale("page", [], buildKernels);
 /** The command line in dist/cli. */
-export const buildCommandLine = () => buildWhenStale("cli", ["--ssr", "src/cli/main.ts"]);
+export const buildCommandLine = () => buildWhenStale("cli", ["--ssr", "src/cli/main.ts"], buildKernels);
 
 /** Path of a Chromium for the browser tests: CHROMIUM, Debian's, or one installed through apt when root. */
 export function findChromium() {

@@ -1,5 +1,5 @@
 // npm start: installs what is missing, solves the bundled case in the terminal, then serves the page on loopback.
-import { buildCommandLine, buildKernels, buildPage, installPackages, ROOT, run, stop } from "./prepare.mjs";
+import { buildCommandLine, buildPage, installPackages, ROOT, run, stop } from "./prepare.mjs";
 import path from "node:path";
 
 const BUNDLED = path.join("presets", "cases", "tapered-ingot.json");
@@ -9,7 +9,6 @@ const port = flag > 0 ? Number(process.argv[flag + 1]) : 4180;
 if (!Number.isInteger(port) || port < 1 || port > 65535) stop("--port wants a number from 1 to 65535.");
 
 installPackages();
-buildKernels();
 buildCommandLine();
 buildPage();
 process.chdir(ROOT);

@@ -6,9 +6,11 @@ export const tell = (line: string): void => {
 };
 
 /** One line a fault: field path, what is wrong, how to mend it. */
+export const problemLine = ({ path, message, mend }: CaseProblem): string =>
+  `${path === "" ? "case" : path}: ${oneLine(message)}; ${oneLine(mend)}`;
+
 export function tellProblems(problems: readonly CaseProblem[]): void {
-  for (const { path, message, mend } of problems)
-    tell(`${path === "" ? "case" : path}: ${oneLine(message)}; ${oneLine(mend)}`);
+  for (const problem of problems) tell(problemLine(problem));
 }
 
 /** What a document says may hold line ends and control characters; a terminal line must not. */
