@@ -90,9 +90,9 @@ describe("figures", () => {
   test("what lasts whole minutes is said in minutes", () => {
     expect([360, 90, 5400, 100].map((each) => plain(lasting(each)))).toEqual([
       "6 min",
-      "90.0 s",
+      "90 s",
       "1 h 30 min",
-      "100.0 s",
+      "100 s",
     ]);
   });
 
@@ -289,6 +289,14 @@ describe("calliper", () => {
       expect(figures.length).toBeGreaterThan(0);
       for (const { label } of figures) expect(plain(label)).toMatch(/^\d+ h( \d\d)?$/);
     }
+  });
+
+  test("seconds beyond ten minutes are written with their minutes", () => {
+    const labels = calliperScale("time", 2960, 1, [2938], 600)
+      .lines.map(({ label }) => plain(label))
+      .filter(Boolean);
+    expect(labels.length).toBeGreaterThan(2);
+    for (const label of labels) expect(label).toMatch(/^\d+ min( \d\d)?$/);
   });
 
   test("an estimate that agrees does not blow the scale up", () => {

@@ -72,10 +72,18 @@ function figure(at: number, major: number): string {
 /** "3 h", "3 h 30", "45 min", "90 s": as short as the step allows. */
 function clock(at: number, major: number): string {
   if (at === 0) return "0";
-  if (major < 60) return `${Number(at.toFixed(1))}\u00a0s`;
+  if (major < 60) return secondsClock(at);
   const minutes = Math.round(at / 60);
   if (minutes < 60) return `${minutes}\u00a0min`;
   const [hours, rest] = [Math.floor(minutes / 60), minutes % 60];
   if (hours >= 48 && rest === 0 && hours % 24 === 0) return `${hours / 24}\u00a0d`;
   return rest === 0 ? `${hours}\u00a0h` : `${hours}\u00a0h\u00a0${String(rest).padStart(2, "0")}`;
+}
+
+/** Seconds alone up to ten minutes, then "47 min 30". */
+function secondsClock(at: number): string {
+  const seconds = Number(at.toFixed(1));
+  if (seconds < 600) return `${seconds}\u00a0s`;
+  const [minutes, rest] = [Math.floor(seconds / 60), Math.round(seconds % 60)];
+  return rest === 0 ? `${minutes}\u00a0min` : `${minutes}\u00a0min\u00a0${String(rest).padStart(2, "0")}`;
 }

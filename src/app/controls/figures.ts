@@ -101,9 +101,10 @@ export function resolutionOf(seconds: number): number {
 
 /** How long something lasts, as people say it: "6 min" rather than "360 s". */
 export function lasting(seconds: number): string {
-  return seconds >= 120 && Math.abs(seconds - Math.round(seconds / MINUTE) * MINUTE) < 0.5 && seconds < LONG
-    ? longDuration(Math.round(seconds / MINUTE))
-    : duration(seconds);
+  const whole = Math.abs(seconds - Math.round(seconds)) < 1e-6;
+  const minutes = seconds >= 2 * MINUTE && seconds < LONG && Math.round(seconds) % MINUTE === 0;
+  if (whole && minutes) return longDuration(Math.round(seconds / MINUTE));
+  return whole && seconds < SHORT ? joined(digits(seconds, 0), "s") : duration(seconds);
 }
 
 /** "115.2 s", "49 min", "3 h 46 min", "2 d 4 h": to the resolution given [s]. */

@@ -102,27 +102,23 @@ export function estimateLines(
   hasLumped: boolean,
   system: UnitSystem,
 ): EstimateLine[] {
-  const { comparison, unit } = answer;
   const lines: EstimateLine[] = [];
-  if (hasLumped)
-    lines.push(estimateLine("lumped", ONE_TEMPERATURE, answer.lumped, unit, comparison.lumped, system));
-  if (series !== null)
-    lines.push(
-      estimateLine("series", seriesName(series.shape), answer.series, unit, comparison.series, system),
-    );
+  if (hasLumped) lines.push(estimateLine("lumped", ONE_TEMPERATURE, answer, system));
+  if (series !== null) lines.push(estimateLine("series", seriesName(series.shape), answer, system));
   return lines;
 }
 
+/** The estimate is told to the same digits as the answer beside it. */
 function estimateLine(
   habit: "lumped" | "series",
   name: string,
-  value: number | null,
-  unit: Answer["unit"],
-  comparison: Comparison | null,
+  { unit, numericalUncertainty, ...answer }: Answer,
   system: UnitSystem,
 ): EstimateLine {
+  const value = answer[habit];
+  const comparison = answer.comparison[habit];
   if (value === null) return { habit, name, value: "", verdict: "cannot say", unsafe: false };
-  const shown = `${figureOf(unit, value, null, system).text}`;
+  const shown = figureOf(unit, value, numericalUncertainty, system).text;
   if (comparison === null) return { habit, name, value: shown, verdict: "", unsafe: false };
   return {
     habit,

@@ -75,6 +75,8 @@ export class CorelagHandover extends LitElement {
   @property() status: Status = "empty";
   @property({ type: Boolean }) stale = false;
   @property({ type: Number }) cursor = 0;
+  /** whether somebody listens to corelag-picture; without, the picture is not offered */
+  @property({ type: Boolean }) pictured = false;
 
   protected override render(): TemplateResult {
     const ready = this.result !== null && !this.stale && this.result.quality === "settled";
@@ -106,12 +108,7 @@ export class CorelagHandover extends LitElement {
         save: () => send(this, "corelag-do", { kind: "save" }),
       },
       { name: "Curves", note: "CSV, a line for each kept instant", needsResult: true, save: out(curvesFile) },
-      {
-        name: "Section picture",
-        note: `PNG, at ${duration(this.cursor)}`,
-        needsResult: true,
-        save: () => this.picture(),
-      },
+      ...(this.pictured ? [this.sectionPicture()] : []),
       {
         name: "Temperatures at every node",
         note: `CSV with its triangles, at ${duration(frame)}, for stress work`,
@@ -125,6 +122,15 @@ export class CorelagHandover extends LitElement {
         save: out(snapshotsFile),
       },
     ];
+  }
+
+  private sectionPicture(): Out {
+    return {
+      name: "Section picture",
+      note: `PNG, at ${duration(this.cursor)}`,
+      needsResult: true,
+      save: () => this.picture(),
+    };
   }
 
   private row({ name, note, save, needsResult }: Out, ready: boolean): TemplateResult {
