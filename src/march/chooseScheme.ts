@@ -1,6 +1,7 @@
 /** Which scheme marches a stage. */
 import { implicitEuler } from "./implicitEuler.ts";
 import { krylov } from "./krylov.ts";
+import { trBdf2 } from "./trBdf2.ts";
 import type { Scheme, SchemeName } from "./types.ts";
 
 /** The scheme of that name; without one, the Krylov march, which is exact in time where a stage is linear. */
@@ -12,6 +13,6 @@ export function chooseScheme(name: SchemeName | undefined): Scheme {
     case undefined:
       return krylov;
     case "tr-bdf2":
-      throw new Error("tr-bdf2 is not among the schemes of this version; use implicit-euler or krylov");
+      return trBdf2;
   }
 }

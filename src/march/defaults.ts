@@ -12,6 +12,9 @@ export const FIRST_INSTANT_SHARE = 1e-4;
 /** A step is doubled when the error expected of the doubled one stays this factor below what is allowed. */
 export const GROWTH_MARGIN = 1.25;
 
+/** Share of the tolerance that implicit Euler aims at: its own estimate is true to some percent, not on the safe side. */
+export const AIM = 0.8;
+
 /** Share of the tolerance left over that one implicit Euler step may use up. */
 export const STEP_SHARE_OF_REMAINDER = 0.5;
 

@@ -11,6 +11,7 @@ import { toInner } from "../linalg/numbering.ts";
 import type { HeldMatrix, SparseSolver } from "../linalg/solver.ts";
 import { largestDifference, largestMagnitude } from "../linalg/vectors.ts";
 import {
+  AIM,
   FACTORS_KEPT,
   FIRST_INSTANT_SHARE,
   FIRST_STEP_SHARE,
@@ -198,7 +199,7 @@ class EulerMarch {
    * tolerance. Before the first instant that matters more is allowed, as it has died down by then.
    */
   private allowedError(step: number, endTime: number): number {
-    const { tolerance } = this.options;
+    const tolerance = AIM * this.options.tolerance;
     const even = tolerance * Math.min(1, step * Math.max(this.relaxation, 1 / endTime));
     const early = Math.sqrt(Math.max(1, this.firstInstant / endTime));
     const left = STEP_SHARE_OF_REMAINDER * (tolerance - largestMagnitude(this.error));

@@ -57,6 +57,15 @@ export function innerSystem(system: LinearSystem, solver: SparseSolver): InnerSy
   return { pattern: inner.pattern, capacity, conductance, loads, held, heldMask };
 }
 
+/** out += sum of a_g(time) p_g on the free rows */
+export function addLoads({ loads, heldMask }: InnerSystem, time: number, out: Float64Array): Float64Array {
+  for (const { vector, signal } of loads) {
+    const amount = signalAt(signal, time);
+    if (amount !== 0) for (let i = 0; i < out.length; i++) if (!heldMask?.[i]) out[i]! += amount * vector[i]!;
+  }
+  return out;
+}
+
 export const heldValue = ({ signal }: InnerHeld, time: number): number => signalAt(signal, time);
 
 /** Set the held unknowns of `out` to their values at `time`. */

@@ -181,7 +181,7 @@ class KrylovMarch {
     );
     const stride = Math.max(1, Math.ceil(knots.length / KRYLOV.mostKnotsChecked));
     for (let k = 0; k < knots.length; k += stride)
-      for (const behind of [0, 0.25, 1, 4, 16])
+      for (const behind of BEHIND_KNOTS)
         if (knots[k]! + behind * first < to) instants.add(knots[k]! + behind * first);
     return [...instants].sort((a, b) => a - b);
   }
@@ -189,6 +189,8 @@ class KrylovMarch {
 
 /** Eight check instants per decade. */
 const CHECK_RATIO = 10 ** (-1 / 8);
+/** Instants behind a knot, in units of the first instant that matters: the field bends there as it does at the start. */
+const BEHIND_KNOTS = [0, ...Array.from({ length: 9 }, (_, k) => 4 ** (k - 6))];
 /** The error at an instant is taken as the largest estimate from this share of it on: single estimates pass through 0. */
 const WINDOW = 4;
 

@@ -25,7 +25,11 @@ export class StepLoads {
    */
   at(weight: number, time: number): Float64Array {
     const { loads, held } = this.system;
-    const key = [weight, ...loads.map(({ signal }) => signalAt(signal, time)), ...held.map((g) => heldValue(g, time))];
+    const key = [
+      weight,
+      ...loads.map(({ signal }) => signalAt(signal, time)),
+      ...held.map((g) => heldValue(g, time)),
+    ];
     const known = this.made.find((entry) => entry.key.every((value, i) => value === key[i]));
     if (known) return known.vector;
     const oldest = this.made.length >= this.kept ? this.made.shift() : undefined;
@@ -44,7 +48,8 @@ export class StepLoads {
     if (heldMask) for (let i = 0; i < out.length; i++) if (heldMask[i]) out[i] = 0;
     held.forEach(({ unknowns, capacityColumn, conductanceColumn }, g) => {
       const value = key[1 + loads.length + g]!;
-      for (let i = 0; i < out.length; i++) out[i]! -= value * (capacityColumn[i]! + weight * conductanceColumn[i]!);
+      for (let i = 0; i < out.length; i++)
+        out[i]! -= value * (capacityColumn[i]! + weight * conductanceColumn[i]!);
       for (const i of unknowns) {
         const place = pattern.diagonal[i]!;
         out[i] = value * (capacity[place]! + weight * conductance[place]!);
