@@ -1,7 +1,7 @@
 /** The sizes on the drawing: diameters at both ends, lengths along the axis. A size leads to the point that sets it. */
 import type { Place } from "../../editor/arcs.ts";
 import type { LoopIndex } from "../../editor/outline.ts";
-import type { Sheet } from "./sheet.ts";
+import type { Sheet, SheetSide } from "./sheet.ts";
 import { toScreen } from "./view.ts";
 import type { Spot, View } from "./view.ts";
 
@@ -12,8 +12,8 @@ export interface Dimension {
   /** places that are measured */
   readonly from: Place;
   readonly to: Place;
-  /** the point whose entry changes it */
-  readonly point: LoopIndex;
+  /** the point, or the arc, whose entry changes it */
+  readonly point: LoopIndex & { readonly arc: boolean };
   /** diameters: which end of the part it stands at; lengths: row, counted from the part outwards */
   readonly end: "near" | "far";
   readonly row: number;
@@ -24,18 +24,40 @@ const MOST_LEVELS = 2;
 
 interface Corner extends LoopIndex {
   readonly at: Place;
+  /** stands on an arc, between its ends */
+  readonly arc: boolean;
 }
 
 export function dimensionsOf(sheet: Sheet): Dimension[] {
-  const corners = sheet.loops
-    .filter((loop) => loop.loop === 0)
-    .flatMap((loop) =>
-      loop.vertices.map((vertex, index): Corner => ({ region: loop.region, loop: 0, index, at: vertex.at })),
-    )
-    .filter(({ at }) => Number.isFinite(at[0] + at[1]));
-  if (corners.length < 2) return [];
-  return [...diameters(corners, isHollow(sheet)), ...lengths(corners)];
+  const outlines = sheet.loops.filter((loop) => loop.loop === 0);
+  const corners = outlines.flatMap((loop) =>
+    loop.vertices.map((vertex, index): Corner => ({
+      region: loop.region,
+      loop: 0,
+      index,
+      at: vertex.at,
+      arc: false,
+    })),
+  );
+  const bulges = outlines.flatMap((loop) =>
+    loop.sides
+      .filter((side) => side.curved)
+      .map((side): Corner => ({
+        region: loop.region,
+        loop: 0,
+        index: side.index,
+        at: widestOf(side),
+        arc: true,
+      })),
+  );
+  const sound = ({ at }: Corner): boolean => Number.isFinite(at[0] + at[1]);
+  const known = corners.filter(sound);
+  if (known.length < 2) return [];
+  return [...diameters([...known, ...bulges.filter(sound)], isHollow(sheet)), ...lengths(known)];
 }
+
+const widestOf = (side: SheetSide): Place =>
+  side.points.reduce((best, place) => (place[0] > best[0] ? place : best), side.points[0]!);
 
 /** A part that nowhere reaches the axis has a bore. */
 function isHollow(sheet: Sheet): boolean {
@@ -60,7 +82,8 @@ function diameters(corners: readonly Corner[], hollow: boolean): Dimension[] {
     end,
     row: 0,
   });
-  return other ? [diameter(widest, "near"), diameter(other, "far")] : [diameter(widest, "near")];
+  const found = other ? [diameter(widest, "near"), diameter(other, "far")] : [diameter(widest, "near")];
+  return found.filter(({ value }) => value > 1e-6);
 }
 
 function pickMost(corners: readonly Corner[], measure: (corner: Corner) => number): Corner {

@@ -27,6 +27,8 @@ export interface OutlineLayer {
   readonly stage: number;
   /** sides at fault, as "region loop index" */
   readonly faulty: ReadonlySet<string>;
+  /** right end of the free room [px] */
+  readonly right: number;
 }
 
 export const sideKey = (loop: SheetLoop, side: SheetSide): string =>
@@ -114,8 +116,9 @@ function sideOf(layer: OutlineLayer, loop: SheetLoop, side: SheetSide): SVGTempl
   </g>`;
 }
 
-/** px between a side and the words beside it */
+/** px between a side and the words beside it, and width of a letter */
 const NOTE_GAP = 12;
+const LETTER = 6.2;
 
 /** The words beside a side: shown while it is pointed at, focused or selected, or when it lacks a condition. */
 function noteAt(
@@ -124,7 +127,7 @@ function noteAt(
   side: SheetSide,
   words: string,
   lacks: boolean,
-): SVGTemplateResult {
+): SVGTemplateResult | typeof nothing {
   const [a, b] = [alongSide(side, 0.3), alongSide(side, 0.34)].map((at) => toScreen(layer.view, ...at)) as [
     Spot,
     Spot,
@@ -138,6 +141,8 @@ function noteAt(
   const out = left ? [way[1], -way[0]] : [-way[1], way[0]];
   const flat = Math.abs(out[1]!) > 0.6;
   const anchor = flat ? "middle" : out[0]! > 0 ? "start" : "end";
+  const reach = words.length * LETTER * (anchor === "middle" ? 0.5 : anchor === "start" ? 1 : 0);
+  if (a[0] + reach > layer.right) return nothing;
   const y = a[1] + out[1]! * NOTE_GAP + (out[1]! > 0.6 ? 10 : flat ? 0 : 4);
   return svg`<text class="note ${lacks ? "lack" : ""}" x=${a[0] + out[0]! * NOTE_GAP} y=${y} text-anchor=${anchor}>${words}</text>`;
 }

@@ -14,6 +14,13 @@ export const PLAIN_WORDS: Readonly<Record<PlainReason, string>> = {
   lost: "Drawn without 3-D graphics: the browser took them back.",
 };
 
+/** Whether the browser gives a drawing context, asked before Three.js is fetched. */
+function hasWebGl(): boolean {
+  const context = document.createElement("canvas").getContext("webgl2");
+  context?.getExtension("WEBGL_lose_context")?.loseContext();
+  return context !== null;
+}
+
 export class Painter {
   reason: PlainReason = "";
   #layer: FieldLayer = new CanvasField();
@@ -37,6 +44,7 @@ export class Painter {
 
   /** Tries to put Three.js in the place of the plain canvas. */
   async useThree(): Promise<void> {
+    if (!hasWebGl()) return this.#fallBack("missing");
     try {
       const { GlField } = await import("./fieldGl.ts");
       if (this.#closed) return;

@@ -83,7 +83,7 @@ export function rulers(view: View, room: RulerRoom, system: UnitSystem): SVGTemp
     <rect class="scale-ground" x="0" y="0" width=${left} height=${bottom}></rect>
     <path class="tick" d=${tickPaths(acrossTicks, upTicks, left, bottom)}></path>
     ${acrossTicks
-      .filter((tick) => tick.rank === 2 && tick.at > left - 1 && tick.at < width - 16)
+      .filter((tick) => tick.rank === 2 && tick.at > left + 14 && tick.at < width - 16)
       .map(
         (tick) =>
           svg`<text x=${tick.at} y=${height - 4} text-anchor="middle">${figure(tick.value, !view.lying)}</text>`,

@@ -30,7 +30,14 @@ export interface SceneAsk {
   readonly shown: Shown;
   /** wanted step between lines; null: a round one */
   readonly step: number | null;
+  /** px per m, so that lines in a thin wall do not run together */
+  readonly scale: number;
 }
+
+/** Lines closer than this run together [px]. */
+const CLOSEST_LINES = 5;
+/** Parts of an octave of zoom within which the step between lines stays. */
+const ZOOM_GRAIN = 2;
 
 /** Round steps of time between two isochrones [s]. */
 const TIME_STEPS = [
@@ -51,21 +58,21 @@ export class SceneKeeper {
       old.result === ask.result &&
       old.step === ask.step &&
       sameShown(old.shown, ask.shown) &&
+      zoomGrain(old.scale) === zoomGrain(ask.scale) &&
       (ask.shown.by === "arrival" || old.cursor === ask.cursor);
     if (!same || !this.#scene) this.#scene = this.#make(ask);
     this.#ask = ask;
     return this.#scene;
   }
 
-  #make({ result, cursor, shown, step }: SceneAsk): Scene {
+  #make({ result, cursor, shown, step, scale }: SceneAsk): Scene {
     const values =
       shown.by === "arrival" ? this.#arrival(result, shown.answer) : fieldAt(result.frames, cursor);
     const { low, high } = extremes(result.section, values);
     const range = shown.by === "arrival" ? rangeOf(low.value, high.value) : temperatureRange(result);
-    const used =
-      step ??
-      (shown.by === "arrival" ? timeStep(range.to - range.from) : roundStep(range.to - range.from, 24));
-    const wanted = step ?? fitStep(used, high.value - low.value, shown.by === "arrival");
+    const time = shown.by === "arrival";
+    const least = (CLOSEST_LINES * steepness(result.section, values)) / scale;
+    const wanted = step ?? chooseStep(range.to - range.from, high.value - low.value, least, time);
     const lines = levelLines(result.section, values, levelsBetween(low.value, high.value, wanted));
     return { mesh: result.section, values, range, step: wanted, lines, low, high };
   }
@@ -89,13 +96,45 @@ const sameShown = (a: Shown, b: Shown): boolean =>
 const rangeOf = (from: number, to: number): Range =>
   to > from ? { from, to } : { from: from - 1, to: from + 1 };
 
-/** A finer round step while the field is nearly even, so that some lines are always seen; never below 0.1. */
-function fitStep(step: number, span: number, time: boolean): number {
-  if (time || span >= 3 * step || span < 0.5) return step;
-  return Math.max(0.1, Math.min(step, roundStep(span, 6)));
+const zoomGrain = (scale: number): number => Math.round(ZOOM_GRAIN * Math.log2(scale));
+
+/**
+ * A round step: about 24 over the whole run, finer while the field is nearly even, coarser where lines would run
+ * together (`least` keeps most of them apart).
+ */
+function chooseStep(range: number, span: number, least: number, time: boolean): number {
+  if (time) return TIME_STEPS.find((step) => range / step <= 10 && step >= least) ?? TIME_STEPS.at(-1)!;
+  const even = roundStep(range, 24);
+  const step = span >= 3 * even || span < 0.5 ? even : Math.max(0.1, Math.min(even, roundStep(span, 6)));
+  return step >= least ? step : roundStep(least, 1);
 }
 
-const timeStep = (span: number): number => TIME_STEPS.find((step) => span / step <= 10) ?? TIME_STEPS.at(-1)!;
+/** Share of the section that may be steeper than the steepness that sets the step. */
+const STEEPEST = 0.25;
+
+/** Slope of the field [K/m, s/m] that all but the steepest quarter of the section stays below. */
+function steepness({ nodes, triangles }: SectionMesh, values: Float32Array): number {
+  const slopes: { slope: number; area: number }[] = [];
+  let whole = 0;
+  for (let t = 0; t < triangles.length; t += 3) {
+    const [a, b, c] = [triangles[t]!, triangles[t + 1]!, triangles[t + 2]!];
+    const [br, bz] = [nodes[2 * b]! - nodes[2 * a]!, nodes[2 * b + 1]! - nodes[2 * a + 1]!];
+    const [cr, cz] = [nodes[2 * c]! - nodes[2 * a]!, nodes[2 * c + 1]! - nodes[2 * a + 1]!];
+    const area = br * cz - bz * cr;
+    const [vb, vc] = [values[b]! - values[a]!, values[c]! - values[a]!];
+    const slope = Math.hypot(vb * cz - vc * bz, vc * br - vb * cr) / area;
+    if (!Number.isFinite(slope)) continue;
+    slopes.push({ slope, area });
+    whole += area;
+  }
+  slopes.sort((p, q) => q.slope - p.slope);
+  let above = 0;
+  for (const { slope, area } of slopes) {
+    above += area;
+    if (above > STEEPEST * whole) return slope;
+  }
+  return 0;
+}
 
 function extremes(mesh: SectionMesh, values: Float32Array): { low: Extreme; high: Extreme } {
   let [low, high] = [-1, -1];

@@ -205,7 +205,7 @@ export class CorelagSection extends LitElement {
 
   get scene(): Scene | null {
     const { result, cursor, shown, step } = this;
-    return result ? this.#keeper.scene({ result, cursor, shown, step }) : null;
+    return result ? this.#keeper.scene({ result, cursor, shown, step, scale: this.view.scale }) : null;
   }
 
   get #faint(): boolean {
@@ -241,6 +241,7 @@ export class CorelagSection extends LitElement {
 
   protected override render(): TemplateResult {
     const { document, scene } = this;
+    const narrow = window.innerWidth <= NARROW;
     return html`
       <div class="caption">${this.#captionLine(scene)}<span class="space"></span>${sectionTools(this)}</div>
       <div
@@ -268,9 +269,10 @@ export class CorelagSection extends LitElement {
           .units=${this.units}
           .library=${this.library}
         ></corelag-facts>
-        ${this.#card(scene)}${readoutOf(this, scene)}
+        ${narrow ? nothing : this.#card(scene)}${readoutOf(this, scene)}
         ${scene && !this.#faint ? html`<p class="heard">${sceneSentence(this, scene)}</p>` : nothing}
       </div>
+      ${narrow ? this.#card(scene) : nothing}
     `;
   }
 
@@ -287,6 +289,7 @@ export class CorelagSection extends LitElement {
       selection: this.selection,
       stage: this.stageNow,
       faulty: sides,
+      right: width - this.#room.card,
     };
     const field = this.#faint ? null : scene;
     const things: ThingsLayer = {

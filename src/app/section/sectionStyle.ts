@@ -266,6 +266,12 @@ export const sectionStyle = css`
     font-size: var(--t-note);
     font-weight: 650;
   }
+  svg .probe text.beside {
+    fill: var(--ink);
+    paint-order: stroke;
+    stroke: var(--sheet);
+    stroke-width: 4px;
+  }
   .probe .reads {
     visibility: hidden;
     font-weight: var(--w-text);
@@ -280,6 +286,9 @@ export const sectionStyle = css`
   .probe.on .hit {
     stroke: var(--hand);
     stroke-width: 1.5;
+  }
+  .balloons {
+    pointer-events: none;
   }
   .mark {
     stroke: var(--ink-3);

@@ -11,9 +11,10 @@ import { temperature } from "../controls/figures.ts";
 import { dimensionRoom, dimensionsOf, drawDimension } from "./dimensions.ts";
 import type { Dimension } from "./dimensions.ts";
 import { coordinate } from "./rulers.ts";
+import { insidePart } from "./sheet.ts";
 import type { Sheet, SheetLoop } from "./sheet.ts";
 import { vertexWords } from "./spoken.ts";
-import { toScreen } from "./view.ts";
+import { fromScreen, toScreen } from "./view.ts";
 import type { Bounds, Spot, View } from "./view.ts";
 
 export interface ThingsLayer {
@@ -42,24 +43,25 @@ export function sizesLayer(layer: ThingsLayer): SVGTemplateResult[] {
     const drawn = drawDimension(dimension, layer.view, room);
     const [x, y] = drawn.middle;
     const text = `${dimension.kind === "diameter" ? "Ø " : ""}${sizeText(dimension.value, layer.units)}`;
-    const { region, loop, index } = dimension.point;
+    const { region, loop, index, arc } = dimension.point;
     const fits = drawn.room > SIZE_ROOM || drawn.upright;
     return svg`
       <path class="dim" d=${drawn.path}></path><path class="dim-head" d=${drawn.heads}></path>
       ${
         fits
           ? svg`<text class="size" x=${x} y=${y} dy="4" text-anchor="middle" transform=${drawn.upright ? `rotate(-90 ${x} ${y})` : ""}
-              data-grip="size" data-region=${region} data-loop=${loop} data-index=${index}>${text}<title>${sizeTitle(dimension)}</title></text>`
+              data-grip=${arc ? "side" : "size"} data-region=${region} data-loop=${loop} data-index=${index}>${text}<title>${sizeTitle(dimension)}</title></text>`
           : nothing
       }
     `;
   });
 }
 
-const sizeTitle = (dimension: Dimension): string => `Set by point ${dimension.point.index + 1}`;
+const sizeTitle = ({ point }: Dimension): string =>
+  `Set by ${point.arc ? "side" : "point"} ${point.index + 1}`;
 
 function sizeText(metres: number, units: UnitSystem): string {
-  return String(Number(toShown(metres, "length", units).toPrecision(5)));
+  return String(Number(toShown(metres, "length", units).toFixed(units === "si" ? 1 : 3)));
 }
 
 export function probesLayer(layer: ThingsLayer): SVGTemplateResult[] {
@@ -72,38 +74,59 @@ export function probesLayer(layer: ThingsLayer): SVGTemplateResult[] {
     const selected = sameSelection(layer.selection, { kind: "probe", index });
     const says = outside ? "outside" : Number.isFinite(value) ? temperature(value, layer.units).text : "";
     const [dx, dy] = probe.at[0] < 1e-6 ? [10, -7] : [11, 15];
+    const onPart = [0, 6.4 * probe.name.length].every((along) =>
+      [-9, 3].every((up) => {
+        const [r, z] = fromScreen(layer.view, x + dx + along, y + dy + up);
+        return r > 0 && insidePart(layer.sheet, [r, z]);
+      }),
+    );
     return svg`<g class="probe ${selected ? "on" : ""} ${outside ? "outside" : ""}" role="button" tabindex="0" data-grip="probe" data-index=${index}
       aria-label="Probe ${probe.name}, r ${coordinate(probe.at[0], layer.units)}, z ${coordinate(probe.at[1], layer.units)} ${shownUnit("length", layer.units)}, ${says}"
       aria-pressed=${selected} style="--on-field: ${ink}">
       <circle class="hit" cx=${x} cy=${y} r="12"></circle>
       <circle class="ring" cx=${x} cy=${y} r="3.5"></circle>
       <path class="cross" d="M${x - 8} ${y}h16M${x} ${y - 8}v16"></path>
-      <text class="probe-name" x=${x + dx} y=${y + dy}>${probe.name}<tspan class="reads"> ${says}</tspan></text>
+      <text class="probe-name ${onPart ? "" : "beside"}" x=${x + dx} y=${y + dy}>${probe.name}<tspan class="reads"> ${says}</tspan></text>
     </g>`;
   });
 }
 
-/** Balloons at the places that decide the answers; several at one place stand side by side. */
-export function balloonsLayer(layer: ThingsLayer): SVGTemplateResult[] {
+/** Balloons at the places that decide the answers; several near one place stand side by side, over all stems. */
+export function balloonsLayer(layer: ThingsLayer): SVGTemplateResult {
   const radius = layer.big ? 10 : 8.5;
   const rise = layer.big ? 30 : 22;
   const taken: Spot[] = [];
-  return layer.answers.map((answer, index) => {
-    if (answer.place === null) return svg``;
+  const balloons = layer.answers.flatMap((answer, index) => {
+    if (answer.place === null) return [];
     const [x, y] = toScreen(layer.view, ...answer.place);
-    let bx = x;
-    while (taken.some(([tx, ty]) => Math.hypot(tx - bx, ty - (y - rise)) < 2 * radius + 2))
-      bx += 2 * radius + 4;
-    taken.push([bx, y - rise]);
-    const ink = layer.inkAt(answer.place);
-    const lit = layer.focusedAnswer === index ? "lit" : "";
-    return svg`<g class="balloon" aria-hidden="true">
-      <path d="M${x} ${y}L${bx} ${y - rise + radius}" stroke=${ink} stroke-width="1.25"></path>
-      <circle cx=${x} cy=${y} r="2.75" fill=${ink}></circle>
-      <circle class="ball ${lit}" cx=${bx} cy=${y - rise} r=${radius}></circle>
-      <text class="ball-n ${lit}" x=${bx} y=${y - rise + 4.3}>${index + 1}</text>
-    </g>`;
+    let at: Spot = [x, y - rise];
+    while (taken.some(([tx, ty]) => Math.hypot(tx - at[0], ty - at[1]) < 2 * radius + 3))
+      at = [at[0] + 2 * radius + 4, at[1]];
+    taken.push(at);
+    return [
+      {
+        index,
+        foot: [x, y] as Spot,
+        at,
+        ink: layer.inkAt(answer.place),
+        lit: layer.focusedAnswer === index ? "lit" : "",
+      },
+    ];
   });
+  return svg`<g class="balloons" aria-hidden="true">
+    ${balloons.map(
+      ({
+        foot: [x, y],
+        at,
+        ink,
+      }) => svg`<path d="M${x} ${y}L${at[0]} ${at[1]}" stroke=${ink} stroke-width="1.25"></path>
+        <circle cx=${x} cy=${y} r="2.75" fill=${ink}></circle>`,
+    )}
+    ${balloons.map(
+      ({ index, at, lit }) => svg`<circle class="ball ${lit}" cx=${at[0]} cy=${at[1]} r=${radius}></circle>
+        <text class="ball-n ${lit}" x=${at[0]} y=${at[1] + 4.3}>${index + 1}</text>`,
+    )}
+  </g>`;
 }
 
 export function pointsLayer(layer: ThingsLayer): SVGTemplateResult[] {
