@@ -64,7 +64,16 @@ function newest(entry) {
   return Math.max(facts.mtimeMs, ...readdirSync(entry).map((name) => newest(path.join(entry, name))));
 }
 
-const SOURCES = ["src", "mesh", "workers", "presets", "package-lock.json", "vite.config.ts", "index.html"];
+const SOURCES = [
+  "src",
+  "mesh",
+  "tests/bench",
+  "workers",
+  "presets",
+  "package-lock.json",
+  "vite.config.ts",
+  "index.html",
+];
 
 /** Builds into a folder of its own, then puts it in place, so that two commands at once do not meet half a build. */
 function buildWhenStale(folder, args, before = () => undefined) {
@@ -92,6 +101,8 @@ function buildWhenStale(folder, args, before = () => undefined) {
 export const buildPage = () => buildWhenStale("page", [], buildKernels);
 /** The command line in dist/cli. */
 export const buildCommandLine = () => buildWhenStale("cli", ["--ssr", "src/cli/main.ts"], buildKernels);
+/** The benchmarks in dist/bench. */
+export const buildBenchmarks = () => buildWhenStale("bench", ["--ssr", "tests/bench/main.ts"], buildKernels);
 
 /** Path of a Chromium for the browser tests: CHROMIUM, Debian's, or one installed through apt when root. */
 export function findChromium() {

@@ -18,17 +18,23 @@ export function tellProblems(problems: readonly CaseProblem[]): void {
 export const oneLine = (text: string): string =>
   text.replaceAll(/[\u0000-\u001f\u007f-\u009f\u2028\u2029]+/g, " ").trim();
 
-/** A progress line that overwrites itself; silent where standard error is not a terminal. */
+/** Between two looks at the progress [ms]: a line that overwrites itself on a terminal, a line of its own elsewhere. */
+const LIVE_EVERY = 100;
+const LOGGED_EVERY = 5000;
+/** Runs shorter than this say nothing where there is no terminal [ms]. */
+const LOGGED_AFTER = 1000;
+
+/** Progress on standard error. */
 export function progressLine(): { show(doing: string, fraction: number): void; clear(): void } {
   const live = process.stderr.isTTY;
-  let last = 0;
+  let next = Date.now() + (live ? 0 : LOGGED_AFTER);
   let width = 0;
   return {
     show(doing, fraction) {
-      if (!live || Date.now() - last < 100) return;
-      last = Date.now();
+      if (Date.now() < next) return;
+      next = Date.now() + (live ? LIVE_EVERY : LOGGED_EVERY);
       const line = `${oneLine(doing)}: ${Math.round(100 * fraction)} %`;
-      process.stderr.write(`\r${line.padEnd(width)}`);
+      process.stderr.write(live ? `\r${line.padEnd(width)}` : `${line}\n`);
       width = line.length;
     },
     clear() {
