@@ -46,7 +46,8 @@ export function recordRun(
   const wanted = new Set(asked);
   const frameTimes: number[] = [];
   const temperatures: Float32Array[] = [];
-  const lag = new LagSum(part.start);
+  const core = slowestPoint(part, timeline, time);
+  const coreTemperature = curve();
   for (let i = 0; i < time.length; i++) {
     fieldAt(timeline, time[i]!, field);
     coldest[i] = tracks.coldest.of(field);
@@ -55,13 +56,12 @@ export function recordRun(
     surfaceMean[i] = tracks.surfaceMean.of(field);
     heat[i] = dot(weights, field) - startHeat;
     for (const [name, values] of probes) values[i] = tracks.probes.get(name)!.of(field);
-    if (time[i]! <= timeline.stages[0]!.ended) lag.add(time[i]!, field);
+    coreTemperature[i] = field[core]!;
     if (i % every === 0 || i === time.length - 1 || wanted.has(time[i]!)) {
       frameTimes.push(time[i]!);
       temperatures.push(Float32Array.from(field));
     }
   }
-  const core = lag.slowest(part);
   return {
     history: {
       time,
@@ -73,43 +73,33 @@ export function recordRun(
       probes: Object.fromEntries(probes),
       core: {
         place: [part.mesh.nodes[2 * core]!, part.mesh.nodes[2 * core + 1]!],
-        temperature: Float64Array.from(time, (instant) => fieldAt(timeline, instant, field)[core]!),
+        temperature: coreTemperature,
       },
     },
     frames: { times: Float64Array.from(frameTimes), temperatures },
   };
 }
 
+/** Instants of the first stage from which the slowest point is told: it lies where the field is flat, so few will do. */
+const LAG_INSTANTS = 24;
+
 /**
- * Finds the slowest point: the unknown whose temperature, integrated over the first stage, has moved least in the
- * direction in which the part as a whole moved. Found, not assumed.
+ * The slowest point: the unknown whose temperature, integrated over the first stage, has moved least in the direction in
+ * which the part as a whole moved. Found, not assumed.
  */
-class LagSum {
-  readonly #moved: Float64Array;
-  readonly #start: Float64Array;
-  #last: Float64Array;
-  #time = 0;
-
-  constructor(start: Float64Array) {
-    this.#start = start;
-    this.#moved = new Float64Array(start.length);
-    this.#last = start.slice();
+function slowestPoint(part: PartSystem, timeline: Timeline, time: Float64Array): number {
+  const first = time.filter((instant) => instant <= timeline.stages[0]!.ended);
+  const every = Math.max(1, Math.floor(first.length / LAG_INSTANTS));
+  const moved = new Float64Array(timeline.size);
+  const field = new Float64Array(timeline.size);
+  let last = 0;
+  for (let i = every; i < first.length; i += every) {
+    fieldAt(timeline, first[i]!, field);
+    for (let j = 0; j < field.length; j++) moved[j]! += (first[i]! - last) * (field[j]! - part.start[j]!);
+    last = first[i]!;
   }
-
-  /** trapezoidal rule from the instant added before */
-  add(time: number, field: Float64Array): void {
-    const half = (time - this.#time) / 2;
-    for (let i = 0; i < field.length; i++)
-      this.#moved[i]! += half * (field[i]! + this.#last[i]! - 2 * this.#start[i]!);
-    this.#last.set(field);
-    this.#time = time;
-  }
-
-  slowest(part: PartSystem): number {
-    const direction = Math.sign(dot(part.interior.volumes, this.#moved)) || 1;
-    let best = 0;
-    for (let i = 1; i < this.#moved.length; i++)
-      if (direction * this.#moved[i]! < direction * this.#moved[best]!) best = i;
-    return best;
-  }
+  const direction = Math.sign(dot(part.interior.volumes, moved)) || 1;
+  let slowest = 0;
+  for (let i = 1; i < moved.length; i++) if (direction * moved[i]! < direction * moved[slowest]!) slowest = i;
+  return slowest;
 }

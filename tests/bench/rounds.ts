@@ -13,16 +13,16 @@ export const median = (values: readonly number[]): number => {
   return sorted.length % 2 === 1 ? sorted[middle]! : (sorted[middle - 1]! + sorted[middle]!) / 2;
 };
 
-/** Runs the work once cold, then for about `seconds` (3 to 25 rounds) warm. */
-export async function timeRounds(work: () => unknown, seconds = 3): Promise<Timed> {
+/** Runs the work once cold, then for some seconds; the median of the second half counts as warm: compilers have settled. */
+export async function timeRounds(work: () => unknown, seconds = 6): Promise<Timed> {
   const once = async (): Promise<number> => {
     const from = performance.now();
     await work();
     return performance.now() - from;
   };
   const cold = await once();
-  const rounds = Math.min(25, Math.max(3, Math.round((1000 * seconds) / Math.max(cold, 1))));
-  const warm: number[] = [];
-  for (let i = 0; i < rounds; i++) warm.push(await once());
-  return { cold, warm: median(warm) };
+  const until = performance.now() + 1000 * seconds;
+  const rounds: number[] = [];
+  while (rounds.length < 4 || (performance.now() < until && rounds.length < 60)) rounds.push(await once());
+  return { cold, warm: median(rounds.slice(rounds.length >> 1)) };
 }
