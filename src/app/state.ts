@@ -5,7 +5,7 @@
  */
 import { batch, computed, signal } from "@preact/signals-core";
 import type { CaseDocument, CaseProblem } from "../case/types.ts";
-import { beginHistory, edit, endGesture, redo, undo } from "../editor/history.ts";
+import { beginHistory, edit, endGesture, redo, replace, undo } from "../editor/history.ts";
 import type { History, Recipe } from "../editor/history.ts";
 import { NOTHING } from "../editor/selection.ts";
 import type { Selection } from "../editor/selection.ts";
@@ -36,6 +36,8 @@ export interface EditOptions {
 
 export class AppState {
   readonly #history = signal<History | null>(null);
+  /** what lay on the sheet before it was cleared, for undo */
+  readonly #aside = signal<History | null>(null);
 
   /** the document as edited; null until a part was begun */
   readonly document = computed<CaseDocument | null>(() => this.#history.value?.document ?? null);
@@ -70,21 +72,28 @@ export class AppState {
   readonly message = signal("");
 
   /** label of the step that undo would take back; null when there is none */
-  readonly undoLabel = computed(() => this.#history.value?.done.at(-1)?.label ?? null);
+  readonly undoLabel = computed(() => {
+    if (this.#history.value) return this.#history.value.done.at(-1)?.label ?? null;
+    return this.#aside.value ? "new part" : null;
+  });
   readonly redoLabel = computed(() => this.#history.value?.undone[0]?.label ?? null);
 
-  /** Lays a document on the sheet and forgets what was there; its history starts empty. */
+  /** Lays a document on the sheet; what was there can be had back by undo. */
   open(document: CaseDocument): void {
     batch(() => {
-      this.#history.value = beginHistory(document);
+      const before = this.#history.value ?? this.#aside.value;
+      const label = `opening of ${document.title || "a case"}`;
+      this.#history.value = before ? replace(before, label, document) : beginHistory(document);
+      this.#aside.value = null;
       this.#forget();
       this.status.value = "preview";
     });
   }
 
-  /** Clears the sheet: the start page. */
+  /** Clears the sheet: the start page. Undo brings back what was there. */
   clear(): void {
     batch(() => {
+      this.#aside.value = this.#history.value ?? this.#aside.value;
       this.#history.value = null;
       this.#forget();
       this.status.value = "empty";
@@ -135,7 +144,14 @@ export class AppState {
   }
 
   undo(): void {
-    if (this.#history.value) this.#history.value = undo(this.#history.value);
+    batch(() => {
+      if (this.#history.value) this.#history.value = undo(this.#history.value);
+      else if (this.#aside.value) {
+        this.#history.value = this.#aside.value;
+        this.#aside.value = null;
+        this.status.value = "preview";
+      }
+    });
   }
 
   redo(): void {

@@ -43,6 +43,12 @@ export function edit(history: History, label: string, recipe: Recipe, gesture?: 
   return { document: after, done: [...kept, step].slice(-LONGEST_HISTORY), undone: [] };
 }
 
+/** Lays another document on the sheet, as one step that can be taken back. */
+export function replace(history: History, label: string, document: CaseDocument): History {
+  const step: EditStep = { label, gesture: undefined, before: history.document, after: document };
+  return { document, done: [...history.done, step].slice(-LONGEST_HISTORY), undone: [] };
+}
+
 /** Ends the running gesture, so that the next edit of the same name is a step of its own. */
 export function endGesture(history: History): History {
   const last = history.done.at(-1);

@@ -296,6 +296,7 @@ export class CorelagSection extends LitElement {
       ...outline,
       answers: field ? (this.result?.answers ?? []) : [],
       focusedAnswer: this.focusedAnswer,
+      arrivalOf: this.shown.by === "arrival" ? this.shown.answer : null,
       valueAt: (place) => (field ? this.#valueAt(field, place) : Number.NaN),
       inkAt: (place) =>
         field ? inkFor(this.#stops, field.range, this.#valueAt(field, place)) : "var(--ink)",

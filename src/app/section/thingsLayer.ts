@@ -25,6 +25,8 @@ export interface ThingsLayer {
   readonly selection: Selection;
   readonly answers: readonly Answer[];
   readonly focusedAnswer: number | null;
+  /** answer whose arrival colours the section; null for none */
+  readonly arrivalOf: number | null;
   /** degC at a place of the part, NaN where unknown */
   readonly valueAt: (place: Place) => number;
   /** colour of lines on the field there */
@@ -109,7 +111,7 @@ export function balloonsLayer(layer: ThingsLayer): SVGTemplateResult {
         foot: [x, y] as Spot,
         at,
         ink: layer.inkAt(answer.place),
-        lit: layer.focusedAnswer === index ? "lit" : "",
+        lit: layer.focusedAnswer === index || layer.arrivalOf === index ? "lit" : "",
       },
     ];
   });
