@@ -19,7 +19,16 @@ export default ts.config(
   },
   {
     files: ["tools/**", "src/cli/**", "tests/bench/**"],
-    languageOptions: { globals: { console: "readonly", process: "readonly", performance: "readonly", setTimeout: "readonly", URL: "readonly", fetch: "readonly" } },
+    languageOptions: {
+      globals: {
+        console: "readonly",
+        process: "readonly",
+        performance: "readonly",
+        setTimeout: "readonly",
+        URL: "readonly",
+        fetch: "readonly",
+      },
+    },
     rules: { "no-console": "off" },
   },
 );

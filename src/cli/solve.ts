@@ -6,7 +6,8 @@ import { solveCase } from "../solveCase.ts";
 import type { RunContext, SolveOptions } from "../solveCase.ts";
 import { EXIT } from "./exit.ts";
 import { summaryText } from "../report/summary.ts";
-import { oneLine, progressLine, tell, tellProblems } from "./terminal.ts";
+import { oneLine } from "../report/plainText.ts";
+import { progressLine, tell, tellProblems } from "./terminal.ts";
 import { writeOutputs } from "./outputs.ts";
 
 export interface SolveFlags {
@@ -32,8 +33,9 @@ export async function solve(text: string, flags: SolveFlags): Promise<number> {
   }
   const progress = progressLine();
   const interrupt = listenForInterrupt();
-  const { out: _out, snapshots: _snapshots, at: _at, ...forced } = flags;
-  const outcome = await solveCase(text, LIBRARY, { ...forced, at }, contextFor(interrupt, progress.show));
+  const { nodes, accuracy, scheme, element } = flags;
+  const options = { at, ...given({ nodes, accuracy, scheme, element }) };
+  const outcome = await solveCase(text, LIBRARY, options, contextFor(interrupt, progress.show));
   interrupt.stop();
   progress.clear();
   switch (outcome.kind) {

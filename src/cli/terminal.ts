@@ -1,5 +1,6 @@
 /** Lines to people go to standard error, except the answers themselves. */
 import type { CaseProblem } from "../case/types.ts";
+import { oneLine } from "../report/plainText.ts";
 
 export const tell = (line: string): void => {
   process.stderr.write(`${line}\n`);
@@ -12,11 +13,6 @@ export const problemLine = ({ path, message, mend }: CaseProblem): string =>
 export function tellProblems(problems: readonly CaseProblem[]): void {
   for (const problem of problems) tell(problemLine(problem));
 }
-
-/** What a document says may hold line ends and control characters; a terminal line must not. */
-// eslint-disable-next-line no-control-regex
-export const oneLine = (text: string): string =>
-  text.replaceAll(/[\u0000-\u001f\u007f-\u009f\u2028\u2029]+/g, " ").trim();
 
 /** Between two looks at the progress [ms]: a line that overwrites itself on a terminal, a line of its own elsewhere. */
 const LIVE_EVERY = 100;

@@ -7,29 +7,25 @@ import { verdict } from "../compare/verdict.ts";
 import type { Answer, CaseResult } from "../run/result.ts";
 import { questionText } from "./questionText.ts";
 import { cautionsFor } from "./cautions.ts";
+import { oneLine } from "./plainText.ts";
 
 /** Readable summary, lines ended. Times from the start of the case. */
 export function summaryText(result: CaseResult): string {
   const lines = [
-    plain(result.title),
+    oneLine(result.title),
     "",
     ...result.answers.flatMap((answer, i) => answerLines(answer, i + 1)),
     ...verdictLines(result),
     ...stageLines(result),
     ...proofLines(result),
-    ...result.warnings.map((warning) => `Note: ${plain(warning)}`),
+    ...result.warnings.map((warning) => `Note: ${oneLine(warning)}`),
     ...cautionsFor(result).map((caution) => `Caution: ${caution}`),
   ];
   return `${lines.join("\n")}\n`;
 }
 
-/** What a document says may hold line ends and control characters; a line must not. */
-// eslint-disable-next-line no-control-regex
-const plain = (text: string): string =>
-  text.replaceAll(/[\u0000-\u001f\u007f-\u009f\u2028\u2029]+/g, " ").trim();
-
 function answerLines(answer: Answer, number: number): string[] {
-  const lines = [`${number}. ${plain(questionText(answer.question))}`];
+  const lines = [`${number}. ${oneLine(questionText(answer.question))}`];
   if (answer.value === null) return [...lines, `   ${answer.remark}`, ""];
   const value = valueText(answer, answer.value, answer.numericalUncertainty);
   lines.push(`   ${value}${placeText(answer)}${answer.remark === "" ? "" : `  ${answer.remark}`}`);
@@ -93,7 +89,7 @@ function stageLines({ stages, history }: CaseResult): string[] {
   if (stages.length < 2) return [];
   return [
     ...stages.map(
-      ({ name, began, ended }) => `${plain(name)}: ${formatDuration(began)} to ${formatDuration(ended)}`,
+      ({ name, began, ended }) => `${oneLine(name)}: ${formatDuration(began)} to ${formatDuration(ended)}`,
     ),
     `At the end the mean is ${formatTemperature(history.mean[history.mean.length - 1]!)}.`,
     "",

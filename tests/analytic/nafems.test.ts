@@ -4,7 +4,8 @@
  * Each has to be met to 0.3 % of the temperature span of the test.
  */
 import { describe, expect, it } from "vitest";
-import { cylinder, readings, simpleCase, solved, tube } from "../helpers/solve.ts";
+import { cylinder, readings, simpleCase, solved } from "../helpers/solve.ts";
+import type { VertexDocument } from "../../src/case/types.ts";
 import type { SolveOptions } from "../../src/solveCase.ts";
 
 const WAYS: [string, SolveOptions][] = [
@@ -46,7 +47,7 @@ describe.each(WAYS)("NAFEMS axisymmetric tests %s", (_, options) => {
       { at: [0.02, 0.14], side: "bore" },
       { at: [0.02, 0.1], side: "band" },
       { at: [0.02, 0.04], side: "bore" },
-    ] satisfies ReturnType<typeof tube>;
+    ] satisfies VertexDocument[];
     const result = await solved(
       simpleCase({
         outline,
