@@ -53,6 +53,10 @@ export async function solve(text: string, flags: SolveFlags): Promise<number> {
   }
 }
 
+/** The flags that were given: an absent one must not stand as undefined. */
+const given = <T extends object>(flags: T): Partial<T> =>
+  Object.fromEntries(Object.entries(flags).filter(([, value]) => value !== undefined)) as Partial<T>;
+
 function kept(
   result: CaseResult | undefined,
   flags: SolveFlags,
