@@ -5,6 +5,7 @@
  */
 import { findOutlineFaults } from "../mesh/outlineFaults.ts";
 import { refineMesh } from "../mesh/refineMesh.ts";
+import type { MeshRequest } from "../mesh/types.ts";
 import { readCase } from "./case/readCase.ts";
 import type { MaterialLibrary } from "./case/readCase.ts";
 import type { Case, CaseProblem } from "./case/types.ts";
@@ -30,6 +31,7 @@ import { settled, statedUncertainty } from "./run/settle.ts";
 import type { SolveOptions } from "./run/solveOptions.ts";
 import { temperatureSpan } from "./run/span.ts";
 import type { Seen } from "./run/span.ts";
+import { thermalRows } from "./run/thermalRows.ts";
 import { unsupportedFields } from "./run/unsupported.ts";
 
 export type { MaterialLibrary } from "./case/readCase.ts";
@@ -104,7 +106,7 @@ async function refineUntilSettled(
     scheme: options.scheme,
     asked: [...instantsAsked(input.questions), ...(options.at ?? [])],
   };
-  const request = { regions: profile.regions, points: input.probes.map((probe) => probe.at) };
+  const request = meshRequest(input, profile, settings.asked);
   const first = element === 6 ? 4 * FIRST_MESH_CORNERS : FIRST_MESH_LINEAR;
   let mesh = meshWithUnknowns(request, options.nodes ?? first, element);
   const levels: Level[] = [];
@@ -141,6 +143,17 @@ async function refineUntilSettled(
     mesh = refineMesh(mesh);
   }
 }
+
+/** What the mesher is asked for: the outline, the probes as nodes, rows where a film first acts. */
+const meshRequest = (
+  input: Case,
+  profile: Profile,
+  asked: readonly number[],
+): Omit<MeshRequest, "nodes"> => ({
+  regions: profile.regions,
+  points: input.probes.map((probe) => probe.at),
+  rows: thermalRows(input, profile, asked),
+});
 
 const rangeOf = ({ recording: { history } }: Level): Seen => ({
   low: history.coldest.reduce((low, value) => Math.min(low, value), Infinity),
@@ -190,8 +203,7 @@ export function systemOfCase(
   const checked = checkDocument(document, library);
   if ("problems" in checked) return checked;
   const { input, profile } = checked;
-  const request = { regions: profile.regions, points: input.probes.map((probe) => probe.at) };
-  const mesh = meshWithUnknowns(request, unknowns, element);
+  const mesh = meshWithUnknowns(meshRequest(input, profile, []), unknowns, element);
   const part = buildPart(
     input,
     profile.sides,

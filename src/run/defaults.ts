@@ -16,6 +16,9 @@ export const TIME_SHARE = 0.1;
 /** First instant of a stage that has to be right, as a share of the stage, when no question asks for an earlier one. */
 export const FIRST_INSTANT_SHARE = 1e-3;
 
+/** Rows along exposed sides aim at this share of the shortest stage, when nothing earlier is asked for. */
+export const ROWS_FROM = 0.01;
+
 /** Instants kept of each stage: evenly spaced ones, and more towards its start, where the skin moves fast. */
 export const EVEN_INSTANTS = 96;
 export const EARLY_INSTANTS = 32;
