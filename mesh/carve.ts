@@ -26,7 +26,17 @@ export function carveRegions(mesh: Triangulation, sides: SideNodes, outline: Out
     start(twin[e]!, piece.right);
   }
   floodRegions(mesh, flood);
+  refuseOutside(mesh);
   packTriangles(mesh);
+}
+
+/** The far points belong to no region, else some side has its region on the wrong hand. */
+function refuseOutside({ corner, region, nodes, used }: Triangulation): void {
+  for (let e = 0; e < used; e++) {
+    if (corner[e]! >= nodes && region[(e / 3) | 0]! >= 0) {
+      throw new Error("a region is not enclosed by its sides: some are crossed or covered by others");
+    }
+  }
 }
 
 /** Row edges are locked too, but the flood passes them: only sides part regions. */

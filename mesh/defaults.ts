@@ -14,6 +14,10 @@ export const THINNEST_SHARE = 1e-6;
 /** More nodes than this are refused: working arrays of about 400 bytes a node must fit a browser tab. */
 export const MOST_NODES = 2_000_000;
 
+/** Said when an outline would need more than a machine can hold. */
+export const TOO_FINE =
+  "the outline's details are too fine for a mesh: more cells or nodes than memory allows";
+
 // ---- relative size of the triangles --------------------------------------------------------------------------
 
 /** Largest relative size, as a share of the part's larger extent: a plain block still gets 16 triangles across. */
@@ -47,7 +51,7 @@ export const WALL_CONTACT_COSINE = 0.42;
 /** A requested point inside asks for this share of its distance to the next side or point. */
 export const POINT_SHARE = 0.8;
 /** Most cells of a size tree before the outline is refused. */
-export const MOST_CELLS = 6_000_000;
+export const MOST_CELLS = 3_000_000;
 
 // ---- side nodes and front ------------------------------------------------------------------------------------
 

@@ -11,6 +11,7 @@ import {
   MOST_ROWS,
   ROW_NODES_SHARE,
   THIN_SIDE_SHARE,
+  TOO_FINE,
   MOST_NODES,
   MOST_PLACINGS,
   PACKING,
@@ -67,6 +68,7 @@ function placeNodes(outline: Outline, sources: SizeSources, plan: RowPlan | null
     field.aimAt(search.aim);
     const sides = placeAffordableRows(outline, field.tree, sources, plan, nodes);
     const most = Math.ceil(1.5 * field.expected()) + 2 * sides.x.length + 100;
+    if (!(most < 4 * MOST_NODES)) throw new Error(TOO_FINE);
     const points = fillFromSides(field.tree, sides, inner, most);
     if (!best || missOf(points.count, nodes) < missOf(best.points.count, nodes)) best = { sides, points };
     if (missOf(points.count, nodes) < COUNT_TOLERANCE) break;

@@ -106,6 +106,7 @@ export function extentOf(regions: readonly OutlineRegion[]): { low: Point; high:
 /** The request's outline as a planar graph. Faults are not looked for here: see `findOutlineFaults`. */
 export function readOutline(request: MeshRequest): Outline {
   const { low, high, size } = extentOf(request.regions);
+  if (!(size > 0 && Number.isFinite(size))) throw new Error("an empty outline, or a place that is no number");
   const tolerance = JOIN_SHARE * size;
   const places = new PlaceBook(tolerance);
   const circles: Arc[] = [];

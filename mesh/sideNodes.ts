@@ -2,7 +2,7 @@
  * Nodes on the sides, spaced by the size field. They belong to their piece from birth: a node is a share t of its
  * piece, its place follows from t. Vertices come first and keep their numbers.
  */
-import { ARC_MOST, SHARP_ANGLE } from "./defaults.ts";
+import { ARC_MOST, MOST_NODES, SHARP_ANGLE, TOO_FINE } from "./defaults.ts";
 import type { Outline, Piece } from "./outline.ts";
 import { curveAt } from "./plane.ts";
 import type { SizeSources } from "./sizeSources.ts";
@@ -64,6 +64,7 @@ export function placeSideNodes(
       ...(rowStops[k] ?? []),
     ].sort((s, t) => s - t);
     const shares = spacedShares(piece, stops, tree);
+    if (nodes.x.length + shares.length > MOST_NODES) throw new Error(TOO_FINE);
     nodes.piecesShares.push(shares);
     nodes.piecesNodes.push(placeOnPiece(nodes, piece, k, shares));
   });

@@ -6,7 +6,7 @@
  * without chords lies wholly inside or wholly outside, by one test; what is outside is not divided further.
  */
 import { chordMeetsSquare, isInside } from "./chords.ts";
-import { LEAF_SIZES, MOST_CELLS } from "./defaults.ts";
+import { LEAF_SIZES, MOST_CELLS, TOO_FINE } from "./defaults.ts";
 import type { Outline } from "./outline.ts";
 import { SOURCE_STRIDE, type SizeSources } from "./sizeSources.ts";
 
@@ -28,8 +28,6 @@ export class SizeTree {
   child: Int32Array;
   cells: Float64Array;
   used = 1;
-  /** all sizes are multiplied by this; at most 1 unless built for it */
-  scale = 1;
   /** size at the last place looked up [m] */
   size = 0;
   /** the integral of 1 / (sqrt(3)/2 h^2) over the part, at scale 1: nodes inside */
@@ -45,6 +43,9 @@ export class SizeTree {
   readonly perCell: number;
 
   private readonly largest: number;
+  /** half the smallest size that any source asks for, scaled */
+  private least = 0;
+  private factor = 1;
   private readonly sources: Float64Array;
   private readonly value: Float64Array;
   private list: Int32Array;
@@ -71,6 +72,7 @@ export class SizeTree {
     this.list = this.firstList();
     const { count, chords } = from;
     this.divide(0, this.middleX, this.middleY, this.half, 0, count, count + chords.count, MIXED, 0);
+    this.scale = 1;
     this.line = this.sideIntegral();
     this.enter(0, 0, 0, TABLE);
   }
@@ -89,9 +91,30 @@ export class SizeTree {
       c = k + (x > cells[CELL_STRIDE * c]! ? 1 : 0) + (y > cells[CELL_STRIDE * c + 1]! ? 2 : 0);
     }
     const q = CELL_STRIDE * c;
-    this.size =
-      this.scale * (cells[q + 3]! + cells[q + 4]! * (x - cells[q]!) + cells[q + 5]! * (y - cells[q + 1]!));
+    const size =
+      this.factor * (cells[q + 3]! + cells[q + 4]! * (x - cells[q]!) + cells[q + 5]! * (y - cells[q + 1]!));
+    // Outside of the part cells are large and the slope leads astray: there the size only has to be above nothing.
+    this.size = size > this.least ? size : this.least;
     return c;
+  }
+
+  /** All sizes are multiplied by this; at most a hair above 1. */
+  get scale(): number {
+    return this.factor;
+  }
+
+  set scale(factor: number) {
+    this.factor = factor;
+    this.least = 0.5 * factor * this.smallestSource();
+  }
+
+  private smallestSource(): number {
+    let smallest = this.largest;
+    for (let j = 0; j < this.sources.length; j += SOURCE_STRIDE) {
+      const h = this.sources[j + 5]!;
+      smallest = Math.min(smallest, h, h + this.sources[j + 6]!);
+    }
+    return smallest;
   }
 
   sizeAt(x: number, y: number): number {
@@ -212,7 +235,7 @@ export class SizeTree {
     const first = this.used;
     this.used += 4;
     if (this.used > MOST_CELLS) {
-      throw new Error(`size field needs more than ${MOST_CELLS} cells: the outline's details are too fine`);
+      throw new Error(TOO_FINE);
     }
     if (this.used > this.child.length) {
       const child = new Int32Array(2 * this.child.length);
