@@ -12,7 +12,7 @@ import { RELATIVE_RESIDUAL } from "./defaults.ts";
 import { NotPositiveDefiniteError } from "./errors.ts";
 import { graphCoordinates } from "./graphCoordinates.ts";
 import { incompleteCholesky } from "./incompleteCholesky.ts";
-import { kernelsAvailable } from "./kernels/instance.ts";
+import { forgetIdleInstances, kernelsAvailable } from "./kernels/instance.ts";
 import {
   gatherValues,
   numberingFrom,
@@ -68,7 +68,10 @@ export interface SparseSolver {
   /** a new factor, empty until refreshed */
   factor(): Factor;
   matrix(): HeldMatrix;
-  /** give the memory back; factors and matrices of this solver are dead afterwards */
+  /**
+   * Give the memory back for the next solver to use; factors and matrices of this one are dead afterwards. See also
+   * `giveBackMemory`.
+   */
   release(): void;
 }
 
@@ -148,6 +151,14 @@ export function makeSolver(
   const kind = options.kind ?? (kernelsAvailable() ? "cholesky" : "conjugate-gradients");
   if (kind === "conjugate-gradients") return conjugateGradientsSolver(pattern, options);
   return choleskySolver(pattern, coordinates ?? graphCoordinates(pattern));
+}
+
+/** Memory of released solvers that is worth keeping warm between runs [bytes]: a preview's, not a large run's. */
+const WARM_MEMORY = 64 * 1024 * 1024;
+
+/** Between runs: memory of released solvers goes back to the machine, but for small ones that keep the next run quick. */
+export function giveBackMemory(): void {
+  forgetIdleInstances(WARM_MEMORY);
 }
 
 /**

@@ -4,7 +4,7 @@
  * matrix must come in a new array, and one that is to be recognised must be kept.
  */
 import type { SparsityPattern } from "../linalg/pattern.ts";
-import { makeSolver, type SolverOptions, type SparseSolver } from "../linalg/solver.ts";
+import { giveBackMemory, makeSolver, type SolverOptions, type SparseSolver } from "../linalg/solver.ts";
 import { KrylovSystem } from "./krylovSystem.ts";
 import type { LinearSystem } from "./types.ts";
 
@@ -68,6 +68,7 @@ export function createWorkspace(options: SolverOptions = {}): MarchWorkspace {
     },
     release() {
       for (const pattern of [...solvers.keys()]) drop(pattern);
+      giveBackMemory();
     },
   };
 }

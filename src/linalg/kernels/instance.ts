@@ -88,16 +88,31 @@ function kernelModule(): object | null {
   return compiled;
 }
 
-/** Instances given back, for reuse: a memory of its own is costly to set up, and its address space is limited. */
-const idle: KernelInstance[] = [];
+/**
+ * Instances given back, for reuse: a memory of its own is costly to set up (every page is touched anew), and the
+ * address space that holds them is limited.
+ */
+let idle: KernelInstance[] = [];
 const IDLE_KEPT = 2;
-/** A memory cannot shrink: larger ones are left to the garbage collector [bytes]. */
-const LARGEST_IDLE = 64 * 1024 * 1024;
 
 /** @throws when the kernels are not available; ask `kernelsAvailable` first */
 export function takeInstance(): KernelInstance {
-  const known = idle.pop();
-  if (known) return known;
+  return idle.pop() ?? newInstance();
+}
+
+/** The instance may be taken again, or is left to the garbage collector when enough are idle. */
+export function giveBackInstance(instance: KernelInstance): void {
+  instance.exports.reset(0);
+  idle.push(instance);
+  if (idle.length > IDLE_KEPT) idle.shift();
+}
+
+/** Leave idle memories of more than `bytes` to the garbage collector: a memory cannot shrink. */
+export function forgetIdleInstances(bytes: number): void {
+  idle = idle.filter((instance) => instance.bytes() <= bytes);
+}
+
+function newInstance(): KernelInstance {
   const module = kernelModule();
   if (!module || !api) throw new Error("WebAssembly SIMD is not available here");
   const memory = new api.Memory({ initial: 2 });
@@ -111,9 +126,4 @@ export function takeInstance(): KernelInstance {
     ints: (pointer, count) => new Int32Array(memory.buffer, pointer, count),
     reals: (pointer, count) => new Float64Array(memory.buffer, pointer, count),
   };
-}
-
-export function giveBackInstance(instance: KernelInstance): void {
-  instance.exports.reset(0);
-  if (idle.length < IDLE_KEPT && instance.bytes() <= LARGEST_IDLE) idle.push(instance);
 }

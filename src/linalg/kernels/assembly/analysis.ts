@@ -112,7 +112,7 @@ function order(
   const inverse = allocateInts(n);
   const stripStart = allocateInts(n + 1);
   const stripColumns = allocateInts(entries);
-  const stripSource = allocateInts(entries);
+  // `source` is free until the end: until then it takes the places in the strip pattern, which nobody needs.
   const stripCoordinates = allocateReals(2 * n);
   const own = allocateInts(n);
   numberAlongStrips(n, coordinates, strips);
@@ -122,16 +122,14 @@ function order(
     setReal(stripCoordinates, 2 * i, getReal(coordinates, 2 * v));
     setReal(stripCoordinates, 2 * i + 1, getReal(coordinates, 2 * v + 1));
   }
-  renumber(n, patternStart, patternColumns, strips, inverse, stripStart, stripColumns, stripSource);
+  renumber(n, patternStart, patternColumns, strips, inverse, stripStart, stripColumns, source);
   dissect(n, stripStart, stripColumns, stripCoordinates, own);
   invert(n, own, inverse);
   eliminationTree(n, stripStart, stripColumns, own, inverse, parent);
   postorder(n, own, parent);
-  invert(n, own, inverse);
-  renumber(n, stripStart, stripColumns, own, inverse, rowStart, columns, source);
-  for (let q = 0; q < entries; q++) setInt(source, q, getInt(stripSource, getInt(source, q)));
   for (let i = 0; i < n; i++) setInt(outerOf, i, getInt(strips, getInt(own, i)));
   invert(n, outerOf, innerOf);
+  renumber(n, patternStart, patternColumns, outerOf, innerOf, rowStart, columns, source);
   reset(before);
 }
 

@@ -104,6 +104,43 @@ export function subtractProducts(
   }
 }
 
+/** Rows of b and values of each that are worked on at a time: 32 KiB, so that they stay in the first-level cache. */
+const TILE_ROWS: i32 = 32;
+const TILE_DEPTH: i32 = 128;
+
+/** The same for blocks of any size, tile by tile. */
+export function subtractProductsTiled(
+  c: usize,
+  cStride: usize,
+  a: usize,
+  rows: i32,
+  b: usize,
+  count: i32,
+  stride: usize,
+  depth: i32,
+  lower: bool,
+): void {
+  for (let k = 0; k < depth; k += TILE_DEPTH) {
+    const left = <usize>k << 3;
+    const part = min(TILE_DEPTH, depth - k);
+    for (let j = 0; j < count; j += TILE_ROWS) {
+      // Of a lower triangle, the rows above the tile have nothing in its columns.
+      const skip = lower ? j : 0;
+      subtractProducts(
+        c + cStride * skip + (<usize>j << 3),
+        cStride,
+        a + stride * skip + left,
+        rows - skip,
+        b + stride * j + left,
+        min(TILE_ROWS, count - j),
+        stride,
+        part,
+        lower,
+      );
+    }
+  }
+}
+
 export function dotProduct(x: usize, y: usize, count: i32): f64 {
   let a = f64x2.splat(0);
   let b = a;
@@ -127,7 +164,11 @@ export let failedColumn: i32 = -1;
 export let failedPivot: f64 = 0;
 export let failedDiagonal: f64 = 0;
 
-/** Columns worked on at a time: what lies left of them is subtracted as one product of blocks. */
+/**
+ * Columns worked on at a time, on two levels: what lies left of a wide block is subtracted from it as one product of
+ * tiles, what lies left of a narrow one within its wide block as one product of few columns.
+ */
+const WIDE_BLOCK: i32 = 64;
 const BLOCK: i32 = 4;
 
 /**
@@ -139,12 +180,19 @@ const BLOCK: i32 = 4;
  */
 export function factorPanel(panel: usize, rows: i32, width: i32, reciprocals: usize, least: f64): bool {
   const stride = <usize>width << 3;
+  let wide = 0;
   for (let begin = 0; begin < width; begin += BLOCK) {
     const count = min(BLOCK, width - begin);
     const corner = panel + stride * begin;
     const shift = <usize>begin << 3;
-    if (begin > 0)
-      subtractProducts(corner + shift, stride, corner, rows - begin, corner, count, stride, begin, false);
+    if (begin == wide + WIDE_BLOCK) {
+      wide = begin;
+      const columns = min(WIDE_BLOCK, width - wide);
+      subtractProductsTiled(corner + shift, stride, corner, rows - wide, corner, columns, stride, wide, false);
+    } else if (begin > wide) {
+      const left = corner + (<usize>wide << 3);
+      subtractProducts(corner + shift, stride, left, rows - begin, left, count, stride, begin - wide, false);
+    }
     if (!factorCorner(corner + shift, stride, count, reciprocals + shift, least)) {
       failedColumn += begin;
       return false;

@@ -28,7 +28,7 @@ import {
   forwardCorner,
   solveLower,
   solveLowerTransposed,
-  subtractProducts,
+  subtractProductsTiled,
   sumOf,
 } from "./dense";
 import { allocateReals, getInt, getReal, intAt, realAt, setInt, setReal } from "./memory";
@@ -76,7 +76,7 @@ export function factorize(factor: usize, values: usize, least: f64): bool {
     if (count > 0) {
       const stride = <usize>width << 3;
       const below = panel + stride * width;
-      subtractProducts(update, <usize>count << 3, below, count, below, count, stride, width, true);
+      subtractProductsTiled(update, <usize>count << 3, below, count, below, count, stride, width, true);
       // The updates of the children are used up: move this one down to where they began.
       if (base < top) memory.copy(realAt(stack, base), update, bytes);
     }
