@@ -4,7 +4,6 @@
  * same answers everywhere.
  */
 import { findOutlineFaults } from "../mesh/outlineFaults.ts";
-import { refineMesh } from "../mesh/refineMesh.ts";
 import type { MeshRequest } from "../mesh/types.ts";
 import { readCase } from "./case/readCase.ts";
 import type { MaterialLibrary } from "./case/readCase.ts";
@@ -12,7 +11,6 @@ import type { Case, CaseProblem } from "./case/types.ts";
 import { buildProfile } from "./profile/buildProfile.ts";
 import { outlineHints, outlineProblems } from "./profile/outlineProblems.ts";
 import type { Profile } from "./profile/types.ts";
-import { linearElements, quadraticElements } from "./fem/elementMesh.ts";
 import type { ElementOrder } from "./fem/elementMesh.ts";
 import type { SparsityPattern } from "./linalg/pattern.ts";
 import { conditionProblems } from "./run/conditions.ts";
@@ -26,7 +24,9 @@ import { instantsAsked } from "./run/questions.ts";
 import { assembleResult } from "./run/assembleResult.ts";
 import type { CaseResult, SolveOutcome } from "./run/result.ts";
 import { signalAt } from "./run/signals.ts";
-import { buildPart, buildStage } from "./run/stageSystem.ts";
+import { KeptWork } from "./run/kept.ts";
+import { buildPart } from "./run/partSystem.ts";
+import { buildStage } from "./run/stageSystem.ts";
 import { settled, statedUncertainty } from "./run/settle.ts";
 import type { SolveOptions } from "./run/solveOptions.ts";
 import { temperatureSpan } from "./run/span.ts";
@@ -36,6 +36,7 @@ import { unsupportedFields } from "./run/unsupported.ts";
 
 export type { MaterialLibrary } from "./case/readCase.ts";
 export type { RunContext } from "./run/context.ts";
+export { KeptWork } from "./run/kept.ts";
 export type { SolveOptions } from "./run/solveOptions.ts";
 
 /**
@@ -54,11 +55,14 @@ export async function solveCase(
   if ("problems" in checked) return { kind: "refused", problems: checked.problems };
   const { input, profile } = checked;
   const kept: { result?: CaseResult } = {};
+  const work = context.kept ?? new KeptWork();
   try {
-    return await refineUntilSettled(input, profile, checked.warnings, options, context, kept);
+    return await refineUntilSettled(input, profile, checked.warnings, options, context, work, kept);
   } catch (error) {
     if (error instanceof Cancelled) return { kind: "cancelled", ...kept };
     return { kind: "failed", failure: failureOf(error), ...kept };
+  } finally {
+    if (!context.kept) work.release();
   }
 }
 
@@ -96,6 +100,7 @@ async function refineUntilSettled(
   warnings: readonly string[],
   options: SolveOptions,
   context: RunContext,
+  work: KeptWork,
   kept: { result?: CaseResult },
 ): Promise<SolveOutcome> {
   const began = context.clock();
@@ -108,7 +113,9 @@ async function refineUntilSettled(
   };
   const request = meshRequest(input, profile, settings.asked);
   const first = element === 6 ? 4 * FIRST_MESH_CORNERS : FIRST_MESH_LINEAR;
-  let mesh = meshWithUnknowns(request, options.nodes ?? first, element);
+  const unknowns = options.nodes ?? first;
+  const meshKey = JSON.stringify([request, unknowns, element]);
+  let mesh = work.mesh(meshKey, () => meshWithUnknowns(request, unknowns, element));
   const levels: Level[] = [];
   for (;;) {
     const level = await solveLevel(
@@ -118,6 +125,7 @@ async function refineUntilSettled(
       element,
       { ...settings, tolerance: TIME_SHARE * aim },
       context,
+      work,
     );
     if (!level) return { kind: "cancelled", ...kept };
     levels.push(level);
@@ -140,7 +148,7 @@ async function refineUntilSettled(
     if (!level.complete) return { kind: "cancelled", ...kept };
     if (last) return { kind: "solved", result: kept.result };
     context.preview?.(kept.result);
-    mesh = refineMesh(mesh);
+    mesh = work.refined(mesh);
   }
 }
 
@@ -204,12 +212,9 @@ export function systemOfCase(
   if ("problems" in checked) return checked;
   const { input, profile } = checked;
   const mesh = meshWithUnknowns(meshRequest(input, profile, []), unknowns, element);
-  const part = buildPart(
-    input,
-    profile.sides,
-    element === 6 ? quadraticElements(mesh) : linearElements(mesh),
-  );
-  const { linear } = buildStage(input, profile.sides, part, input.stages[0]!);
+  const work = new KeptWork();
+  const part = buildPart(input, profile.sides, mesh, element, work);
+  const { linear } = buildStage(input, profile.sides, part, input.stages[0]!, work);
   if (linear.held.length > 0) return { problems: [heldInSystem] };
   const load = new Float64Array(part.start.length);
   for (const { vector, signal } of linear.loads)

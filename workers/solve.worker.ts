@@ -1,7 +1,7 @@
 /** The solver's worker: thin. It knows when to pause, when to give way to a newer edit, and how results cross. */
 import { expose } from "comlink";
 import { LIBRARY } from "../presets/materials/index.ts";
-import { solveCase } from "../src/solveCase.ts";
+import { KeptWork, solveCase } from "../src/solveCase.ts";
 import type { RunContext } from "../src/solveCase.ts";
 import type { SolveOutcome } from "../src/run/result.ts";
 import { warmUpCase } from "./warmUp.ts";
@@ -11,6 +11,8 @@ import type { SolveEvent, Solver, SolveRequest } from "./protocol.ts";
 const STRETCH = 16;
 const PROGRESS_EVERY = 80;
 
+/** Meshes, factors and bases of the edits before: most edits leave most of them standing. */
+const kept = new KeptWork();
 let newest = -1;
 const ended = new Set<number>();
 
@@ -34,6 +36,7 @@ function contextFor(job: number, onEvent: (event: SolveEvent) => void): RunConte
     },
     preview: (result) => onEvent({ kind: "preview", job, result }),
     clock: () => performance.now() / 1000,
+    kept,
   };
 }
 

@@ -1,4 +1,5 @@
 /** What the host of a run (worker, command line, test) supplies: cancel, progress, pauses. */
+import type { KeptWork } from "./kept.ts";
 import type { CaseResult } from "./result.ts";
 
 export interface RunContext {
@@ -10,6 +11,8 @@ export interface RunContext {
   breathe?(): Promise<void>;
   /** the answers of a mesh that will still be refined */
   preview?(result: CaseResult): void;
+  /** work kept from earlier runs, for a host that runs many; without it the run keeps its own and gives it back */
+  readonly kept?: KeptWork;
   /** wall clock [s], for information only */
   clock(): number;
 }

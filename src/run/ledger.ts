@@ -1,6 +1,6 @@
 /** Where the heat went: what the part holds, what came through its sides, what its sources released. */
 import { multiply } from "../linalg/pattern.ts";
-import type { PartSystem } from "./stageSystem.ts";
+import type { PartSystem } from "./partSystem.ts";
 import type { StageRun, Timeline } from "./timeline.ts";
 import { dot } from "./tracks.ts";
 

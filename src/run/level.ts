@@ -1,7 +1,6 @@
 /** One mesh, the whole case on it: the unit of work that refinement repeats. */
 import type { TriangleMesh } from "../../mesh/types.ts";
 import type { Case } from "../case/types.ts";
-import { linearElements, quadraticElements } from "../fem/elementMesh.ts";
 import type { ElementOrder } from "../fem/elementMesh.ts";
 import type { NamedSide } from "./conditions.ts";
 import type { RunContext } from "./context.ts";
@@ -13,8 +12,9 @@ import { answerQuestion } from "./questions.ts";
 import type { FieldAnswer } from "./questions.ts";
 import { recordRun } from "./record.ts";
 import type { Recording } from "./record.ts";
-import { buildPart } from "./stageSystem.ts";
-import type { PartSystem } from "./stageSystem.ts";
+import type { KeptWork } from "./kept.ts";
+import { buildPart } from "./partSystem.ts";
+import type { PartSystem } from "./partSystem.ts";
 import { fieldAt } from "./timeline.ts";
 import type { Timeline } from "./timeline.ts";
 import { buildTracks } from "./tracks.ts";
@@ -45,11 +45,20 @@ export async function solveLevel(
   element: ElementOrder,
   settings: MarchSettings,
   context: RunContext,
+  kept: KeptWork,
 ): Promise<Level | null> {
-  const part = buildPart(input, sides, element === 6 ? quadraticElements(mesh) : linearElements(mesh));
+  const part = buildPart(input, sides, mesh, element, kept);
   const probeNodes = new Map(input.probes.map((probe, i) => [probe.name, mesh.pointNodes[i]!]));
   const tracks = buildTracks(part, probeNodes);
-  const { timeline, warnings, complete } = await marchStages(input, sides, part, tracks, settings, context);
+  const { timeline, warnings, complete } = await marchStages(
+    input,
+    sides,
+    part,
+    tracks,
+    settings,
+    context,
+    kept,
+  );
   if (timeline.stages.length === 0) return null;
   const recording = recordRun(part, tracks, timeline, settings.asked);
   const asked = { part, tracks, timeline, history: recording.history };

@@ -7,9 +7,11 @@ import { Cancelled, pause } from "./context.ts";
 import type { RunContext } from "./context.ts";
 import { firstReached, reached } from "./crossings.ts";
 import { FIRST_INSTANT_SHARE } from "./defaults.ts";
+import type { KeptWork } from "./kept.ts";
 import { keptInstants } from "./instants.ts";
 import { buildStage } from "./stageSystem.ts";
-import type { PartSystem, StageSystem } from "./stageSystem.ts";
+import type { PartSystem } from "./partSystem.ts";
+import type { StageSystem } from "./stageSystem.ts";
 import type { StageRun, Timeline } from "./timeline.ts";
 import { trackFor } from "./tracks.ts";
 import type { Going, Tracks } from "./tracks.ts";
@@ -37,6 +39,7 @@ export async function marchStages(
   tracks: Tracks,
   settings: MarchSettings,
   context: RunContext,
+  kept: KeptWork,
 ): Promise<MarchedCase> {
   const stages: StageRun[] = [];
   const warnings: string[] = [];
@@ -44,9 +47,9 @@ export async function marchStages(
   let began = 0;
   let complete = true;
   for (const stage of input.stages) {
-    const system = buildStage(input, sides, part, stage);
+    const system = buildStage(input, sides, part, stage, kept);
     const asked = settings.asked.map((time) => time - began);
-    const marched = await marchStage(stage, system, field, { ...settings, asked }, context);
+    const marched = await marchStage(stage, system, field, { ...settings, asked }, context, kept);
     if (!marched) {
       complete = false;
       break;
@@ -72,11 +75,13 @@ async function marchStage(
   start: Float64Array,
   settings: MarchSettings,
   context: RunContext,
+  kept: KeptWork,
 ): Promise<{ history: StageHistory; complete: boolean } | null> {
   const earliest = settings.asked.filter((time) => time > 0).map((time) => time / 2);
   const march = chooseScheme(settings.scheme)(system.linear, start, {
     duration: stage.lasts,
     tolerance: settings.tolerance,
+    workspace: kept.workspace,
     firstInstant: Math.min(FIRST_INSTANT_SHARE * stage.lasts, ...earliest),
   });
   let last: MarchProgress | undefined;

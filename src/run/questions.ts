@@ -5,7 +5,7 @@ import type { SampledCurve } from "./crossings.ts";
 import { goingFrom } from "./marchStages.ts";
 import { heatWeights } from "./ledger.ts";
 import type { Answer, History } from "./result.ts";
-import type { PartSystem } from "./stageSystem.ts";
+import type { PartSystem } from "./partSystem.ts";
 import { fieldAt } from "./timeline.ts";
 import type { Timeline } from "./timeline.ts";
 import { dot, trackFor } from "./tracks.ts";

@@ -4,7 +4,7 @@ import { keptInstants } from "./instants.ts";
 import { heatWeights } from "./ledger.ts";
 import { signalsOf } from "./marchStages.ts";
 import type { Frames, History } from "./result.ts";
-import type { PartSystem } from "./stageSystem.ts";
+import type { PartSystem } from "./partSystem.ts";
 import { fieldAt } from "./timeline.ts";
 import type { Timeline } from "./timeline.ts";
 import { dot } from "./tracks.ts";

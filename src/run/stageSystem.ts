@@ -1,29 +1,14 @@
-/**
- * From a case on a mesh to the linear systems that are marched. Here heat meets elements: the only place that turns
- * materials and conditions into numbers for the assembly.
- */
-import type { Case, Stage } from "../case/types.ts";
-import { addFilm, assembleInterior, assemblyTarget, edgeAreas } from "../fem/assemble.ts";
-import type { AssemblyTarget, InteriorMatrices } from "../fem/assemble.ts";
+/** The linear system of one stage: films onto the part's conduction, surroundings and fluxes as driven loads. */
+import type { Case, Condition, Stage } from "../case/types.ts";
+import { addFilm, edgeAreas } from "../fem/assemble.ts";
 import type { ElementMesh } from "../fem/elementMesh.ts";
-import type { HeldUnknowns, LinearSystem, Load } from "../march/types.ts";
-import { exposedEdges, groupEdges } from "./conditions.ts";
-import type { NamedSide } from "./conditions.ts";
+import type { HeldUnknowns, LinearSystem, Load, Signal } from "../march/types.ts";
+import { groupEdges } from "./conditions.ts";
+import type { EdgeGroup, NamedSide } from "./conditions.ts";
+import type { KeptWork } from "./kept.ts";
+import { constant } from "./partSystem.ts";
+import type { PartSystem } from "./partSystem.ts";
 import { signalOf } from "./signals.ts";
-
-/** The part on one mesh: what does not change from stage to stage. */
-export interface PartSystem {
-  readonly mesh: ElementMesh;
-  readonly target: AssemblyTarget;
-  readonly interior: InteriorMatrices;
-  /** degC at the start, per unknown */
-  readonly start: Float64Array;
-  /** integral of each shape function over the exposed surface [m2] */
-  readonly exposedAreas: Float64Array;
-  /** mesh sizes for the report [m3], [m2] */
-  readonly volume: number;
-  readonly exposedArea: number;
-}
 
 /** One stage: the system to march, and what is needed to balance its heat. */
 export interface StageSystem {
@@ -34,24 +19,16 @@ export interface StageSystem {
   readonly filmWeights: Float64Array;
 }
 
-/** Assembles what all stages share. */
-export function buildPart(input: Case, sides: readonly NamedSide[], mesh: ElementMesh): PartSystem {
-  const target = assemblyTarget(mesh);
-  const materials = input.regions.map((region) => input.materials[region.material]!);
-  const interior = assembleInterior(mesh, target, {
-    conductivity: materials.map((material) => constant(material.conductivity)),
-    volumetricHeatCapacity: materials.map((material) => material.density * constant(material.heatCapacity)),
-  });
-  const exposedAreas = edgeAreas(mesh, exposedEdges(mesh, sides));
-  return {
-    mesh,
-    target,
-    interior,
-    start: startField(input, mesh, interior),
-    exposedAreas,
-    volume: sum(interior.volumes),
-    exposedArea: sum(exposedAreas),
-  };
+/** What of a stage depends on its films and on which sides are held or heated, but on no temperature and no flux. */
+export interface StageMatrices {
+  readonly conductance: Float64Array;
+  readonly filmWeights: Float64Array;
+  /** one per group of edges: film times area [W/K], or area [m2] of a flux; null for held sides */
+  readonly vectors: readonly (Float64Array | null)[];
+  /** one per group of edges; null where nothing is held */
+  readonly held: readonly (Uint32Array | null)[];
+  /** sums of vectors that are driven alike, by the numbers of their groups: kept so that they are recognised */
+  readonly sums: Map<string, Float64Array>;
 }
 
 /** The system of one stage. Loads through sides come first, sources last. */
@@ -60,50 +37,85 @@ export function buildStage(
   sides: readonly NamedSide[],
   part: PartSystem,
   stage: Stage,
+  kept: KeptWork,
 ): StageSystem {
-  const { mesh, interior } = part;
-  const conductance = interior.conduction.slice();
-  const filmWeights = new Float64Array(mesh.nodes.length / 2);
-  const loads: Load[] = [];
-  const held: HeldUnknowns[] = [];
-  const taken = new Set<number>();
-  for (const { condition, edges } of groupEdges(mesh, sides, stage)) {
-    if (condition.kind === "film") {
-      const vector = addFilm(mesh, part.target.pattern, edges, constant(condition.film), conductance);
-      for (let i = 0; i < vector.length; i++) filmWeights[i]! += vector[i]!;
-      addLoad(loads, { vector, signal: signalOf(condition.ambient) });
-    } else if (condition.kind === "flux") {
-      addLoad(loads, { vector: edgeAreas(mesh, edges), signal: signalOf(condition.flux) });
-    } else if (condition.kind === "held") {
-      held.push({ unknowns: nodesOf(mesh, edges, taken), signal: signalOf(condition.held) });
-    }
-  }
-  const sideLoads = loads.length;
-  input.regions.forEach((region, i) => {
+  const groups = groupEdges(part.mesh, sides, stage);
+  const key = JSON.stringify(
+    groups.map(({ condition, edges }) => [condition.kind, filmOf(condition), edges]),
+  );
+  const matrices = kept.stage(part.matrices, key, () => stageMatrices(part, groups));
+  const loads = sideLoads(groups, matrices);
+  const sources = input.regions.flatMap((region, i): Load[] => {
     const source = constant(region.source);
-    if (source !== 0) loads.push({ vector: interior.regionVolumes[i]!, signal: signalOf(source) });
+    return source === 0 ? [] : [{ vector: part.interior.regionVolumes[i]!, signal: signalOf(source) }];
   });
+  const held = groups.flatMap(({ condition }, g): HeldUnknowns[] =>
+    condition.kind === "held" ? [{ unknowns: matrices.held[g]!, signal: signalOf(condition.held) }] : [],
+  );
   return {
     linear: {
       pattern: part.target.pattern,
-      capacity: interior.capacity,
-      conductance,
-      loads,
+      capacity: part.interior.capacity,
+      conductance: matrices.conductance,
+      loads: [...loads, ...sources],
       held,
-      coordinates: mesh.nodes,
+      coordinates: part.mesh.nodes,
     },
-    sideLoads,
-    filmWeights,
+    sideLoads: loads.length,
+    filmWeights: matrices.filmWeights,
   };
 }
 
-/** Loads driven by equal signals are one load: fewer bases for the march. */
-function addLoad(loads: Load[], load: Load): void {
-  const same = loads.find(
-    (other) => equal(other.signal.times, load.signal.times) && equal(other.signal.values, load.signal.values),
+const filmOf = (condition: Condition): number | null =>
+  condition.kind === "film" ? constant(condition.film) : null;
+
+function stageMatrices(part: PartSystem, groups: readonly EdgeGroup[]): StageMatrices {
+  const { mesh, interior, target } = part;
+  const conductance = interior.conduction.slice();
+  const filmWeights = new Float64Array(mesh.nodes.length / 2);
+  const taken = new Set<number>();
+  const vectors = groups.map(({ condition, edges }) => {
+    if (condition.kind === "flux") return edgeAreas(mesh, edges);
+    if (condition.kind !== "film") return null;
+    const vector = addFilm(mesh, target.pattern, edges, constant(condition.film), conductance);
+    for (let i = 0; i < vector.length; i++) filmWeights[i]! += vector[i]!;
+    return vector;
+  });
+  const held = groups.map(({ condition, edges }) =>
+    condition.kind === "held" ? nodesOf(mesh, edges, taken) : null,
   );
-  if (!same) loads.push(load);
-  else for (let i = 0; i < load.vector.length; i++) same.vector[i]! += load.vector[i]!;
+  return { conductance, filmWeights, vectors, held, sums: new Map() };
+}
+
+/** Groups that are driven by equal signals make one load: fewer bases for the march. */
+function sideLoads(groups: readonly EdgeGroup[], { vectors, sums }: StageMatrices): Load[] {
+  const alike: { signal: Signal; members: number[] }[] = [];
+  groups.forEach(({ condition }, g) => {
+    if (condition.kind !== "film" && condition.kind !== "flux") return;
+    const signal = signalOf(condition.kind === "film" ? condition.ambient : condition.flux);
+    const same = alike.find(
+      (other) => equal(other.signal.times, signal.times) && equal(other.signal.values, signal.values),
+    );
+    if (same) same.members.push(g);
+    else alike.push({ signal, members: [g] });
+  });
+  return alike.map(({ signal, members }) => ({ signal, vector: sumOf(members, vectors, sums) }));
+}
+
+function sumOf(
+  members: readonly number[],
+  vectors: StageMatrices["vectors"],
+  sums: Map<string, Float64Array>,
+): Float64Array {
+  if (members.length === 1) return vectors[members[0]!]!;
+  const key = members.join();
+  let sum = sums.get(key);
+  if (!sum) {
+    sum = new Float64Array(vectors[members[0]!]!.length);
+    for (const g of members) for (let i = 0; i < sum.length; i++) sum[i]! += vectors[g]![i]!;
+    sums.set(key, sum);
+  }
+  return sum;
 }
 
 const equal = (a: Float64Array, b: Float64Array): boolean =>
@@ -121,34 +133,3 @@ function nodesOf(mesh: ElementMesh, edges: readonly number[], taken: Set<number>
     }
   return Uint32Array.from(nodes);
 }
-
-/** Start temperatures; a node shared by regions starts at their mean, weighed by what each region stores there. */
-function startField(input: Case, mesh: ElementMesh, interior: InteriorMatrices): Float64Array {
-  const first = input.regions[0]!.start;
-  const start = new Float64Array(mesh.nodes.length / 2).fill(first);
-  if (input.regions.every((region) => region.start === first)) return start;
-  const weight = new Float64Array(start.length);
-  start.fill(0);
-  const n = mesh.nodesPerElement;
-  for (let e = 0; e < mesh.region.length; e++) {
-    const region = mesh.region[e]!;
-    const material = input.materials[input.regions[region]!.material]!;
-    for (let i = 0; i < n; i++) {
-      const node = mesh.elements[n * e + i]!;
-      const share =
-        Math.abs(interior.regionVolumes[region]![node]!) * material.density * constant(material.heatCapacity);
-      weight[node]! += share;
-      start[node]! += share * input.regions[region]!.start;
-    }
-  }
-  for (let i = 0; i < start.length; i++) start[i]! /= weight[i]!;
-  return start;
-}
-
-/** Curves that reach this file are constants: tables are refused before (unsupported.ts). */
-function constant(curve: Case["regions"][number]["source"]): number {
-  if (typeof curve !== "number") throw new Error("a table reached the linear system");
-  return curve;
-}
-
-const sum = (values: Float64Array): number => values.reduce((total, value) => total + value, 0);

@@ -4,7 +4,7 @@
  */
 import { extremeOf } from "../fem/extremes.ts";
 import type { Extreme } from "../fem/extremes.ts";
-import type { PartSystem } from "./stageSystem.ts";
+import type { PartSystem } from "./partSystem.ts";
 
 export interface Track {
   readonly name: string;

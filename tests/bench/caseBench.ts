@@ -4,10 +4,10 @@ import { performance } from "node:perf_hooks";
 import { meshRegions } from "../../mesh/meshRegions.ts";
 import { meshQuality } from "../../mesh/quality.ts";
 import { LIBRARY } from "../../presets/materials/index.ts";
-import { quadraticElements } from "../../src/fem/elementMesh.ts";
 import { meshWithUnknowns } from "../../src/run/meshCase.ts";
 import { marchStages } from "../../src/run/marchStages.ts";
-import { buildPart } from "../../src/run/stageSystem.ts";
+import { KeptWork } from "../../src/run/kept.ts";
+import { buildPart } from "../../src/run/partSystem.ts";
 import { buildTracks } from "../../src/run/tracks.ts";
 import { checkDocument, solveCase } from "../../src/solveCase.ts";
 import type { RunContext } from "../../src/solveCase.ts";
@@ -56,14 +56,16 @@ export async function benchSolve(file: string, nodes: number): Promise<Record<st
     const from = performance.now();
     const mesh = meshWithUnknowns(request, nodes, 6);
     const meshed = performance.now();
-    const part = buildPart(input, profile.sides, quadraticElements(mesh));
+    const work = new KeptWork();
+    const part = buildPart(input, profile.sides, mesh, 6, work);
     const assembled = performance.now();
     const settings = { scheme: undefined, tolerance: 0.01, asked: [] };
-    await marchStages(input, profile.sides, part, buildTracks(part, new Map()), settings, context);
+    await marchStages(input, profile.sides, part, buildTracks(part, new Map()), settings, context, work);
     parts.mesh.push(meshed - from);
     parts.assemble.push(assembled - meshed);
     parts.march.push(performance.now() - assembled);
     unknowns = part.start.length;
+    work.release();
   }
   return {
     nodes: unknowns,
