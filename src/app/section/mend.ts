@@ -80,14 +80,14 @@ export class CorelagMend extends LitElement {
     const [first] = this.problems;
     if (!first || !this.document) return nothing;
     const others = this.problems.length - 1;
-    return html`<aside class="card" role="alert" aria-label="Fault">
+    return html`<div class="card" role="alert" aria-label="Fault">
       <h2>${icon("bad")}<span>${headline(first)}</span></h2>
       <p>${rest(first)}</p>
       <p class="acts">${this.acts(first)}</p>
       <p class="aside">
         ${capital(first.mend)}${others > 0 ? html` <b>${others === 1 ? "One more fault" : `${others} more faults`}</b> after this.` : nothing}
       </p>
-    </aside>`;
+    </div>`;
   }
 
   private acts(problem: CaseProblem): TemplateResult {

@@ -354,13 +354,13 @@ export class CorelagSection extends LitElement {
   }
 
   #spokenName(): string {
-    const points = this.sheet.loops.reduce((sum, loop) => sum + loop.vertices.length, 0);
-    const sides = this.sheet.loops.reduce(
-      (sum, loop) => sum + loop.sides.filter((side) => !side.onAxis).length,
-      0,
-    );
+    const { loops, probes } = this.sheet;
+    const points = loops.reduce((sum, loop) => sum + loop.vertices.length, 0);
+    const sides = loops.reduce((sum, loop) => sum + loop.sides.filter((side) => !side.onAxis).length, 0);
     const name = this.document?.part.regions.map((region) => region.name).join(" and ") ?? "part";
-    return `Section of the ${name}, ${this.view.lying ? "upper" : "right"} half editable. ${points} points, ${sides} sides, ${this.sheet.probes.length} probes.`;
+    const count = (number: number, thing: string): string => `${number} ${thing}${number === 1 ? "" : "s"}`;
+    const half = this.view.lying ? "upper" : "right";
+    return `Section of the ${name}, ${half} half editable. ${count(points, "point")}, ${count(sides, "side")}, ${count(probes.length, "probe")}.`;
   }
 
   #card(scene: Scene | null): TemplateResult | typeof nothing {
