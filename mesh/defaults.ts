@@ -93,6 +93,8 @@ export const ROW_STEP_SHARE = 0.7;
 export const ROW_SIZE_DROP = 0.6;
 /** Requested points keep this share of a top edge's length to it, else a row is left out. */
 export const ROW_POINT_GAP = 0.35;
+/** The true arc may lie off its chord by this share of the first row. */
+export const ROW_SAGITTA_SHARE = 0.2;
 /** Rows take this share of the nodes at most; beyond, all of them are made thicker. */
 export const ROW_NODES_SHARE = 0.5;
 /** Columns that lean at a corner stand upright again after so many depths of the rows. */

@@ -1,9 +1,11 @@
 /** How many rows fit: at corners before the side nodes are placed, at every column after. */
 import type { Chords } from "./chords.ts";
 import {
+  ARC_MOST,
   MOST_ROWS,
   ROW_MOST,
   ROW_RADIUS_SHARE,
+  ROW_SAGITTA_SHARE,
   ROW_SIDE_SHARE,
   ROW_STEP_SHARE,
   ROW_WALL_SHARE,
@@ -11,7 +13,7 @@ import {
 import type { Outline } from "./outline.ts";
 import { rowDepth, rowThickness, type RowCorner, type RowPlan, type RowStrip } from "./rowPlan.ts";
 import { piecesWithStops } from "./rowPlan.ts";
-import { LEFT_HAND } from "./sideNodes.ts";
+import { LEFT_HAND, type RowNeeds } from "./sideNodes.ts";
 import type { SizeTree } from "./sizeTree.ts";
 import { wallThickness } from "./wallThickness.ts";
 
@@ -54,8 +56,40 @@ function depthAtCorner(corner: RowCorner, outline: Outline): number {
     : ROW_SIDE_SHARE * outline.size;
 }
 
+/** What the rows of a plan ask of the side nodes. */
+export function rowNeeds(plan: RowPlan, outline: Outline): RowNeeds {
+  return { stops: rowStops(plan, outline), mostTurn: mostTurns(plan, outline) };
+}
+
+function mostTurns(plan: RowPlan, outline: Outline): number[] {
+  const mostTurn = outline.pieces.map(() => ARC_MOST);
+  for (const strip of plan.strips) {
+    mostTurn[strip.piece] = Math.min(mostTurn[strip.piece]!, mostTurnBeside(strip, outline));
+  }
+  return mostTurn;
+}
+
+/** Lengths [m] that triangles at each piece may have, so that the size field knows of the chords' limits. */
+export function rowSizeLimits(plan: RowPlan, outline: Outline): number[] {
+  const turns = mostTurns(plan, outline);
+  return outline.pieces.map(({ arc }, k) =>
+    arc && turns[k]! < ARC_MOST ? turns[k]! * arc.radius : Infinity,
+  );
+}
+
+/**
+ * Most turn of a chord [rad] with rows beside it: the true arc lies off its chord by the sagitta R turn^2 / 8, which
+ * must stay a small share of the first row, or the curved triangle there would fold.
+ */
+function mostTurnBeside(strip: RowStrip, outline: Outline): number {
+  const { arc } = outline.pieces[strip.piece]!;
+  return arc
+    ? Math.min(ARC_MOST, Math.sqrt((8 * ROW_SAGITTA_SHARE * strip.thickness) / arc.radius))
+    : ARC_MOST;
+}
+
 /** Shares of each piece at which rows end. */
-export function rowStops(plan: RowPlan, outline: Outline): number[][] {
+function rowStops(plan: RowPlan, outline: Outline): number[][] {
   const stops: number[][] = outline.pieces.map(() => []);
   const done = new Set<string>();
   for (const corner of plan.corners) {

@@ -10,7 +10,7 @@ import {
   countRowsAtCorners,
   DepthLimit,
   levelGroups,
-  rowStops,
+  rowNeeds,
   rowsThatFit,
   smoothedCounts,
 } from "./rowCounts.ts";
@@ -33,7 +33,7 @@ export function placeSidesAndRows(
   if (plan) {
     countRowsAtCorners(plan, outline, tree);
     for (let trial = 0; trial < MOST_TRIALS; trial++) {
-      const sides = placeSideNodes(outline, tree, sources, rowStops(plan, outline));
+      const sides = placeSideNodes(outline, tree, sources, rowNeeds(plan, outline));
       if (new RowLayer(outline, tree, sources, plan, sides).lay()) return sides;
     }
   }

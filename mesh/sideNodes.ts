@@ -37,12 +37,19 @@ export interface SideNodes {
 const MOST_SHELLS = 60;
 const LEAST_SHELL_GROWTH = 0.05;
 
-/** @param rowStops  shares at which each piece must have nodes, for rows that end there */
+/** What rows ask of the side nodes, per piece. */
+export interface RowNeeds {
+  /** shares at which a piece must have nodes, because rows end there */
+  readonly stops: readonly (readonly number[])[];
+  /** most turn of an arc's chord [rad] */
+  readonly mostTurn: readonly number[];
+}
+
 export function placeSideNodes(
   outline: Outline,
   tree: SizeTree,
   from: SizeSources,
-  rowStops: readonly (readonly number[])[] = [],
+  rows: RowNeeds | null = null,
 ): SideNodes {
   const nodes = {
     x: [...outline.x],
@@ -61,9 +68,9 @@ export function placeSideNodes(
     const stops = [
       ...shells(piece, tree, from.sharpest[piece.a]!, firstStep[piece.a]!, false),
       ...shells(piece, tree, from.sharpest[piece.b]!, firstStep[piece.b]!, true),
-      ...(rowStops[k] ?? []),
+      ...(rows?.stops[k] ?? []),
     ].sort((s, t) => s - t);
-    const shares = spacedShares(piece, stops, tree);
+    const shares = spacedShares(piece, stops, tree, rows?.mostTurn[k] ?? ARC_MOST);
     if (nodes.x.length + shares.length > MOST_NODES) throw new Error(TOO_FINE);
     nodes.piecesShares.push(shares);
     nodes.piecesNodes.push(placeOnPiece(nodes, piece, k, shares));
@@ -118,12 +125,12 @@ function shells(piece: Piece, tree: SizeTree, angle: number, first: number, from
 }
 
 /** Shares of the nodes between the ends of a piece; the stops are among them. */
-export function spacedShares(piece: Piece, stops: readonly number[], tree: SizeTree): number[] {
+function spacedShares(piece: Piece, stops: readonly number[], tree: SizeTree, mostTurn: number): number[] {
   const shares: number[] = [];
   let t0 = 0;
   for (const t1 of [...stops, 1]) {
     if (t1 - t0 > 1e-9) {
-      spread(piece, t0, t1, tree, shares);
+      spread(piece, t0, t1, tree, mostTurn, shares);
       if (t1 < 1) shares.push(t1);
     }
     t0 = t1;
@@ -132,7 +139,14 @@ export function spacedShares(piece: Piece, stops: readonly number[], tree: SizeT
 }
 
 /** Equal shares of the integral of ds / h between t0 and t1, found by steps of about half a size. */
-function spread(piece: Piece, t0: number, t1: number, tree: SizeTree, shares: number[]): void {
+function spread(
+  piece: Piece,
+  t0: number,
+  t1: number,
+  tree: SizeTree,
+  mostTurn: number,
+  shares: number[],
+): void {
   const p = [0, 0];
   const at = [t0];
   const sums = [0];
@@ -148,7 +162,7 @@ function spread(piece: Piece, t0: number, t1: number, tree: SizeTree, shares: nu
     sums.push(sum);
   }
   let n = Math.max(1, Math.round(sum));
-  if (piece.arc) n = Math.max(n, Math.ceil((Math.abs(piece.arc.turn) * (t1 - t0)) / ARC_MOST));
+  if (piece.arc) n = Math.max(n, Math.ceil((Math.abs(piece.arc.turn) * (t1 - t0)) / mostTurn));
   for (let i = 1, j = 0; i < n; i++) {
     const wanted = (sum * i) / n;
     while (sums[j + 1]! < wanted) j++;

@@ -27,6 +27,8 @@ export interface SizeSources {
   readonly stretches: Float64Array;
   readonly count: number;
   readonly sideStart: number;
+  /** piece of each stretch on a side */
+  readonly pieceOf: Int32Array;
   /** largest relative size [m] */
   readonly largest: number;
   readonly chords: Chords;
@@ -62,16 +64,31 @@ export function sizeSources(outline: Outline): SizeSources {
   addCorners(outline, samples, wedges, list);
   addPoints(outline, largest, list);
   const sideStart = list.length / SOURCE_STRIDE;
-  for (const side of samples) addStretches(side, list);
+  const pieceOf: number[] = [];
+  samples.forEach((side, k) => {
+    addStretches(side, list);
+    while (sideStart + pieceOf.length < list.length / SOURCE_STRIDE) pieceOf.push(k);
+  });
   return {
     stretches: withFloor(list, FINEST_SHARE * outline.size),
     count: list.length / SOURCE_STRIDE,
     sideStart,
+    pieceOf: Int32Array.from(pieceOf),
     largest,
     chords,
     wedges,
     sharpest: Float64Array.from(wedges, (at) => at.reduce((least, w) => Math.min(least, w.angle), Infinity)),
   };
+}
+
+/** The same sources with limits on the size at pieces [m], whatever the number of nodes. */
+export function withLimits(sources: SizeSources, limits: readonly number[]): SizeSources {
+  const stretches = sources.stretches.slice();
+  sources.pieceOf.forEach((k, i) => {
+    const j = SOURCE_STRIDE * (sources.sideStart + i) + 6;
+    stretches[j] = Math.min(stretches[j]!, limits[k]!);
+  });
+  return { ...sources, stretches };
 }
 
 function withFloor(list: readonly number[], finest: number): Float64Array {
