@@ -11,6 +11,7 @@ import { buildProfile } from "../profile/buildProfile.ts";
 import type { Profile } from "../profile/types.ts";
 import { appStyle } from "./appStyle.ts";
 import type { Deed, EventDetails } from "./events.ts";
+import { download } from "./download.ts";
 import { Follow } from "./follow.ts";
 import type { CorelagHead } from "./head/head.ts";
 import { icon } from "./icons.ts";
@@ -18,6 +19,8 @@ import { keep, readKept } from "./keeping.ts";
 import { pageKeys } from "./keys.ts";
 import type { CorelagKeys } from "./keysSheet.ts";
 import { openText, isStandable, saveDocument } from "./opening.ts";
+import { stem } from "./pane/files.ts";
+import type { CorelagSection } from "./section/section.ts";
 import { Solving } from "./solving.ts";
 import { AppState } from "./state.ts";
 import { shared } from "./styles/shared.ts";
@@ -39,6 +42,7 @@ export class CorelagApp extends LitElement {
   @state() private darkSystem = matchMedia(DARK).matches;
   @state() private dropping = false;
   @query("corelag-head") private head!: CorelagHead;
+  @query("corelag-section") private section!: CorelagSection;
   @query("corelag-keys") private keys!: CorelagKeys;
 
   readonly #profile = computed(() => profileOf(this.state.document.value));
@@ -176,6 +180,15 @@ export class CorelagApp extends LitElement {
     on("corelag-do", (deed) => this.perform(deed));
   }
 
+  /** The section as it stands, as a PNG. */
+  async #savePicture(): Promise<void> {
+    try {
+      download(await this.section.picture(), `${stem(this.state.document.value?.title ?? "")}.png`);
+    } catch (error) {
+      this.state.message.value = `The picture could not be made: ${error instanceof Error ? error.message : String(error)}.`;
+    }
+  }
+
   perform(deed: Deed): void {
     const { state: s } = this;
     switch (deed.kind) {
@@ -188,6 +201,8 @@ export class CorelagApp extends LitElement {
       case "save":
         if (s.document.value) saveDocument(s.document.value);
         return;
+      case "picture":
+        return void this.#savePicture();
       case "new":
         return s.clear();
       case "retry":

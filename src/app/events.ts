@@ -29,7 +29,7 @@ export interface EventDetails {
 
 /** Whole-case deeds of the head and the keys. */
 export type Deed =
-  | { kind: "undo" | "redo" | "save" | "open" | "new" | "retry" | "keys" }
+  | { kind: "undo" | "redo" | "save" | "picture" | "open" | "new" | "retry" | "keys" }
   | { kind: "read"; text: string; name: string }
   | { kind: "begin"; document: CaseDocument }
   /** a case that comes with the page; "" for the first */

@@ -3,6 +3,8 @@ import type { MaterialLibrary } from "../case/library.ts";
 import { readCase } from "../case/readCase.ts";
 import type { CaseDocument } from "../case/types.ts";
 import { writeCase } from "../case/writeCase.ts";
+import { download } from "./download.ts";
+import { stem } from "./pane/files.ts";
 
 export type Opened = { readonly document: CaseDocument } | { readonly refused: string };
 
@@ -69,18 +71,8 @@ export function isStandable(value: unknown): value is CaseDocument {
 
 /** Hands the case over as a file. */
 export function saveDocument(document: CaseDocument): void {
-  const name =
-    (document.title ?? "case")
-      .toLowerCase()
-      .replace(/[^a-z0-9]+/g, "-")
-      .replace(/^-|-$/g, "") || "case";
-  saveText(writeCase(document), `${name}.json`);
-}
-
-function saveText(text: string, name: string): void {
-  const link = globalThis.document.createElement("a");
-  link.href = URL.createObjectURL(new Blob([text], { type: "application/json" }));
-  link.download = name;
-  link.click();
-  setTimeout(() => URL.revokeObjectURL(link.href), 10_000);
+  download(
+    new Blob([writeCase(document)], { type: "application/json" }),
+    `${stem(document.title ?? "")}.json`,
+  );
 }

@@ -5,6 +5,7 @@ import type { CaseDocument } from "../../case/types.ts";
 import { cautionsFor } from "../../report/cautions.ts";
 import type { CaseResult } from "../../run/result.ts";
 import { duration } from "../controls/figures.ts";
+import { download } from "../download.ts";
 import { send } from "../events.ts";
 import { icon } from "../icons.ts";
 import type { Status } from "../state.ts";
@@ -24,7 +25,7 @@ interface Out {
 /**
  * The hand-over: what can be given to somebody who has to follow this without asking.
  *
- * Sends corelag-do (save the case file) and corelag-picture (the section is asked for its picture).
+ * Sends corelag-do (save the case file, save the picture of the section).
  */
 @customElement("corelag-handover")
 export class CorelagHandover extends LitElement {
@@ -75,8 +76,6 @@ export class CorelagHandover extends LitElement {
   @property() status: Status = "empty";
   @property({ type: Boolean }) stale = false;
   @property({ type: Number }) cursor = 0;
-  /** whether somebody listens to corelag-picture; without, the picture is not offered */
-  @property({ type: Boolean }) pictured = false;
 
   protected override render(): TemplateResult {
     const ready = this.result !== null && !this.stale && this.result.quality === "settled";
@@ -99,7 +98,7 @@ export class CorelagHandover extends LitElement {
     const frame =
       result === null ? 0 : (result.frames.times[nearestFrame(result.frames.times, this.cursor)] ?? 0);
     const count = result?.frames.times.length ?? 0;
-    const out = (make: (result: CaseResult) => OutFile) => () => result !== null && download(make(result));
+    const out = (make: (result: CaseResult) => OutFile) => () => result !== null && saveFile(make(result));
     return [
       {
         name: "Case file",
@@ -108,7 +107,12 @@ export class CorelagHandover extends LitElement {
         save: () => send(this, "corelag-do", { kind: "save" }),
       },
       { name: "Curves", note: "CSV, a line for each kept instant", needsResult: true, save: out(curvesFile) },
-      ...(this.pictured ? [this.sectionPicture()] : []),
+      {
+        name: "Section picture",
+        note: `PNG, as it stands, at ${duration(this.cursor)}`,
+        needsResult: true,
+        save: () => send(this, "corelag-do", { kind: "picture" }),
+      },
       {
         name: "Temperatures at every node",
         note: `CSV with its triangles, at ${duration(frame)}, for stress work`,
@@ -124,15 +128,6 @@ export class CorelagHandover extends LitElement {
     ];
   }
 
-  private sectionPicture(): Out {
-    return {
-      name: "Section picture",
-      note: `PNG, at ${duration(this.cursor)}`,
-      needsResult: true,
-      save: () => this.picture(),
-    };
-  }
-
   private row({ name, note, save, needsResult }: Out, ready: boolean): TemplateResult {
     return html`<li>
       <div><b>${name}</b><small>${note}</small></div>
@@ -146,10 +141,6 @@ export class CorelagHandover extends LitElement {
         Save
       </button>
     </li>`;
-  }
-
-  private picture(): void {
-    this.dispatchEvent(new CustomEvent("corelag-picture", { bubbles: true, composed: true }));
   }
 
   private waiting(): string {
@@ -182,15 +173,7 @@ export class CorelagHandover extends LitElement {
   }
 }
 
-/** Hands a file to the browser's own saving. */
-function download({ name, type, content }: OutFile): void {
-  const url = URL.createObjectURL(new Blob([content], { type }));
-  const link = document.createElement("a");
-  link.href = url;
-  link.download = name;
-  link.click();
-  setTimeout(() => URL.revokeObjectURL(url), 10_000);
-}
+const saveFile = ({ name, type, content }: OutFile): void => download(new Blob([content], { type }), name);
 
 declare global {
   interface HTMLElementTagNameMap {

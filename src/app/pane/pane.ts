@@ -108,8 +108,6 @@ export class CorelagPane extends LitElement {
   @property({ attribute: false }) shown: Shown = { by: "temperature" };
   @property() units: UnitSystem = "si";
   @property() pane: Pane = "answers";
-  /** whether the page can make a picture of the section when it is told corelag-picture */
-  @property({ type: Boolean }) pictured = false;
   @query("corelag-answers") private answers!: CorelagAnswers | null;
 
   override connectedCallback(): void {
@@ -158,7 +156,6 @@ export class CorelagPane extends LitElement {
         .status=${status}
         .stale=${stale}
         .cursor=${this.cursor}
-        .pictured=${this.pictured}
       ></corelag-handover>`;
     if (document === null)
       return hints(() => send(this, "corelag-do", { kind: "preset", name: SOLVED_EXAMPLE }));

@@ -48,7 +48,7 @@ function sureFacts(document: CaseDocument, result: CaseResult, system: UnitSyste
       ? { name: "temperatures", value: "not known yet", note: "one mesh only was solved" }
       : {
           name: "temperatures good to",
-          value: `\u00b1${difference(doubt, system).text}`,
+          value: `\u00b1${difference(roundUp(doubt), system).text}`,
           note: "mesh and time together",
         };
   const solved: Fact = {
@@ -100,12 +100,15 @@ function givenTemperatures(document: CaseDocument, result: CaseResult, system: U
 
 function heatFacts({ run }: CaseResult, system: UnitSystem): Fact[] {
   const joules = (value: number): string => figureOf("J", value, null, system).text;
-  const facts: Fact[] = [{ name: "came in through the sides", value: joules(run.heatThroughSides) }];
+  // the figures carry no sign: the words say which way the heat went
+  const through = run.heatThroughSides < 0 ? "went out through the sides" : "came in through the sides";
+  const stored = run.heatStored < 0 ? "given off by the part" : "taken up by the part";
+  const facts: Fact[] = [{ name: through, value: joules(run.heatThroughSides) }];
   if (run.heatFromSources !== 0) facts.push({ name: "released inside", value: joules(run.heatFromSources) });
   const kept = run.energyImbalance <= ENERGY_LIMIT;
   return [
     ...facts,
-    { name: "taken up by the part", value: joules(run.heatStored) },
+    { name: stored, value: joules(run.heatStored) },
     {
       name: "left over",
       value: small(run.energyImbalance),

@@ -74,6 +74,14 @@ export class Painter {
     this.#layer.draw(picture);
   }
 
+  /** What is painted now, anew on a plain canvas of its own; null when nothing is. */
+  copy(pixelRatio: number): HTMLCanvasElement | null {
+    if (!this.#picture) return null;
+    const field = new CanvasField();
+    field.draw({ ...this.#picture, pixelRatio });
+    return field.canvas;
+  }
+
   clear(): void {
     this.#picture = null;
     this.#layer.clear();

@@ -26,6 +26,7 @@ import { outlineUnder, sidesLayer } from "./outlineLayer.ts";
 import type { OutlineLayer } from "./outlineLayer.ts";
 import { faultsOf } from "./faults.ts";
 import { Painter, PLAIN_WORDS } from "./painter.ts";
+import { PICTURE_RATIO, sectionPicture } from "./picture.ts";
 import { readoutOf, sceneSentence } from "./readout.ts";
 import { pointers, rulers } from "./rulers.ts";
 import { inkFor, SceneKeeper, sceneValueAt } from "./scene.ts";
@@ -237,6 +238,12 @@ export class CorelagSection extends LitElement {
       height,
       pixelRatio: Math.min(2, window.devicePixelRatio || 1),
     });
+  }
+
+  /** The section as it stands, as a PNG. */
+  picture(): Promise<Blob> {
+    const ground = getComputedStyle(this).getPropertyValue("--sheet").trim();
+    return sectionPicture(this.#painter?.copy(PICTURE_RATIO) ?? null, this.lines, ground);
   }
 
   protected override render(): TemplateResult {
