@@ -30,7 +30,10 @@ export const SAME_INSTANT = 1e-10;
 /** Factors kept at a time: the step and its half. */
 export const FACTORS_KEPT = 2;
 
-/** Numbers of the Krylov march, from the study described in DEVELOPERS.md [krylov]. */
+/**
+ * Numbers of the Krylov march. Shifts and counts come from a study on eight meshes (shift 0.003 to 0.1 of the span, 15 to
+ * 60 vectors, first instant 1e-4 to 1e-2 of the span).
+ */
 export const KRYLOV = {
   /** shift g as a share of the span: smaller where early instants matter */
   shiftEarly: 0.005,

@@ -8,6 +8,7 @@ import { join } from "node:path";
 import { gatherValues, toInner } from "../../src/linalg/numbering.ts";
 import { patternFromEntries, slotOf, type SparsityPattern } from "../../src/linalg/pattern.ts";
 import { makeSolver, type SolverKind } from "../../src/linalg/solver.ts";
+import { median } from "./rounds.ts";
 import { readArray, readArrayIfThere, readSymmetric, type Entries } from "./readMatrixMarket.ts";
 
 export interface MarchBenchOptions {
@@ -85,7 +86,7 @@ function runRounds(once: () => Round, asked: number | undefined): Round[] {
   return rounds;
 }
 
-interface BenchSystem {
+export interface BenchSystem {
   readonly pattern: SparsityPattern;
   readonly capacity: Float64Array;
   readonly conductance: Float64Array;
@@ -143,7 +144,7 @@ function marchOnce(system: BenchSystem, { dt, steps, kind }: MarchBenchOptions):
   };
 }
 
-function readSystem(folder: string, uniformStart: number): BenchSystem {
+export function readSystem(folder: string, uniformStart: number): BenchSystem {
   const capacity = readSymmetric(join(folder, "capacity.mtx"));
   const conductance = readSymmetric(join(folder, "conduction.mtx"));
   const { size } = conductance;
@@ -176,9 +177,4 @@ function spread(pattern: SparsityPattern, { rows, columns, values }: Entries): F
 /** Columns r and z of the file as pairs. */
 function pairs(rows: number, values: Float64Array): Float64Array {
   return Float64Array.from({ length: 2 * rows }, (_, k) => values[(k % 2) * rows + (k >> 1)]!);
-}
-
-function median(values: readonly number[]): number {
-  const sorted = [...values].sort((a, b) => a - b);
-  return sorted[sorted.length >> 1]!;
 }

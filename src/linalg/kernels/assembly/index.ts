@@ -15,4 +15,5 @@ export {
 } from "./analysis";
 export { factorEntries, factorWork } from "./supernodes";
 export { failedDiagonal, failedPivot, subtractProducts, factorPanel } from "./dense";
-export { failedUnknown, factorize, multiplyAdd, newFactor, solve } from "./factor";
+export { failedUnknown, factorize, newFactor } from "./factor";
+export { multiplyAdd, solve } from "./solve";
