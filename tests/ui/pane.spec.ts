@@ -45,6 +45,31 @@ test("snapshots come with the series that names their times", async ({ page }) =
   expect(names.filter((name) => name.endsWith(".vtu")).length).toBeGreaterThan(10);
 });
 
+test("the section is saved as a picture: field in colours, drawing over it", async ({ page }) => {
+  await page.getByRole("tab", { name: "Hand-over" }).click();
+  const saving = page.waitForEvent("download");
+  await page.getByRole("button", { name: "Save: Section picture" }).click();
+  const file = await saving;
+  expect(file.suggestedFilename()).toMatch(/\.png$/);
+  const bytes = await readFile(await file.path());
+  const facts = await page.evaluate(async (text) => {
+    const bitmap = await createImageBitmap(new Blob([Uint8Array.from(atob(text), (c) => c.charCodeAt(0))]));
+    const canvas = new OffscreenCanvas(bitmap.width, bitmap.height);
+    const pen = canvas.getContext("2d")!;
+    pen.drawImage(bitmap, 0, 0);
+    const { data } = pen.getImageData(0, 0, bitmap.width, bitmap.height);
+    let [warm, dark] = [0, 0];
+    for (let i = 0; i < data.length; i += 4) {
+      if (data[i]! > 200 && data[i + 2]! < 120) warm++;
+      if (data[i]! + data[i + 1]! + data[i + 2]! < 120) dark++;
+    }
+    return { width: bitmap.width, height: bitmap.height, warm, dark };
+  }, bytes.toString("base64"));
+  expect(facts.width).toBeGreaterThan(1500);
+  expect(facts.warm).toBeGreaterThan(0.05 * facts.width * facts.height);
+  expect(facts.dark).toBeGreaterThan(1000);
+});
+
 test("results of an earlier case cannot be handed over", async ({ page }) => {
   await page.getByRole("tab", { name: "Hand-over" }).click();
   await page.evaluate(() => {
