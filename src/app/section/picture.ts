@@ -1,5 +1,7 @@
 /** The section as a PNG: the field painted anew at print fineness, the drawing over it with its styles written out. */
 
+import fontUrl from "@fontsource-variable/sofia-sans-semi-condensed/files/sofia-sans-semi-condensed-latin-wght-normal.woff2?url";
+
 /** Pixels per CSS pixel: enough for a page at 200 dots an inch. */
 export const PICTURE_RATIO = 2;
 
@@ -14,7 +16,10 @@ const CARRIED = [
   "stroke-linecap",
   "opacity",
   "paint-order",
-  "font",
+  // the shorthand is empty as soon as one longhand cannot be told in it
+  "font-family",
+  "font-size",
+  "font-weight",
   "font-feature-settings",
   "letter-spacing",
   "text-anchor",
@@ -58,10 +63,20 @@ async function imageOf(drawing: SVGSVGElement, width: number, height: number): P
   copy.setAttribute("width", String(width));
   copy.setAttribute("height", String(height));
   carryStyles(drawing, copy);
+  copy.prepend(await fontStyle());
   const image = new Image();
   image.src = `data:image/svg+xml;charset=utf-8,${encodeURIComponent(new XMLSerializer().serializeToString(copy))}`;
   await image.decode();
   return image;
+}
+
+/** A picture knows no fonts of the page: it carries its own. */
+async function fontStyle(): Promise<SVGStyleElement> {
+  const bytes = new Uint8Array(await (await fetch(fontUrl)).arrayBuffer());
+  const text = btoa(Array.from(bytes, (byte) => String.fromCharCode(byte)).join(""));
+  const style = document.createElementNS("http://www.w3.org/2000/svg", "style");
+  style.textContent = `@font-face { font-family: "Sofia Sans Semi Condensed Variable"; font-weight: 1 1000; src: url("data:font/woff2;base64,${text}") format("woff2"); }`;
+  return style;
 }
 
 function carryStyles(from: Element, to: Element): void {
