@@ -21,3 +21,6 @@ export const FIRST_DIAGONAL_SHIFT = 1e-3;
  * leaves some 1e-15; a part cooled only by a film of 1e-6 W/(m2 K) on a fine mesh still has about 1e-10.
  */
 export const SINGULAR_PIVOT = 1e-13;
+
+/** Multiply-adds of one step of a factorization that is taken in steps: some 20 ms. */
+export const STEP_WORK = 3e7;

@@ -45,6 +45,11 @@ export interface Factor {
    */
   refresh(values: Float64Array): void;
   /**
+   * The same in steps of some 20 ms: yields the share done. Only one factor of a solver may be under way at a time; a
+   * factor left half done is empty.
+   */
+  refreshInSteps(values: Float64Array): Generator<number, void, void>;
+  /**
    * Solve A x = b. `x` holds a guess on entry, which an exact factor ignores. `x` may be `b` for an exact factor only.
    * @returns iterations spent: 1 for an exact factor
    */
@@ -110,10 +115,16 @@ export function conjugateGradientsSolver(
       const preconditioner = incompleteCholesky(inner.pattern);
       const own = new Float64Array(inner.source.length);
       const b = new Float64Array(pattern.size);
+      const refresh = (values: Float64Array) => {
+        own.set(values);
+        withOuterNumber(numbering, () => preconditioner.refresh(own));
+      };
       return {
-        refresh(values) {
-          own.set(values);
-          withOuterNumber(numbering, () => preconditioner.refresh(own));
+        refresh,
+        // An incomplete factor is soon done: one step.
+        *refreshInSteps(values) {
+          yield 0;
+          refresh(values);
         },
         solve: (rhs, x) => conjugateGradients(inner.pattern, own, rhs, preconditioner, work, aim, x),
         solveProduct(matrix, x, extra, out) {

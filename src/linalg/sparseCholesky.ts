@@ -2,7 +2,7 @@
  * The exact solver: sparse Cholesky in WebAssembly. Nested dissection from the coordinates, elimination tree, relaxed
  * supernodes, multifrontal numeric phase; the kernels are in kernels/assembly, this file moves data in and out.
  */
-import { SINGULAR_PIVOT } from "./defaults.ts";
+import { SINGULAR_PIVOT, STEP_WORK } from "./defaults.ts";
 import { NotPositiveDefiniteError } from "./errors.ts";
 import { giveBackInstance, takeInstance, type KernelInstance } from "./kernels/instance.ts";
 import type { Numbering, RenumberedPattern } from "./numbering.ts";
@@ -105,18 +105,32 @@ function choleskyFactor(
     ensureLive();
     if (!filled) throw new Error("the factor holds no matrix yet");
   };
+  const begin = (values: Float64Array) => {
+    ensureLive();
+    if (released) throw new Error("the factor was released");
+    filled = false;
+    instance.reals(valueBuffer, values.length).set(values);
+    kernels.beginFactorization(factor, valueBuffer);
+  };
+  const goOn = (work: number): boolean => {
+    const state = kernels.continueFactorization(factor, SINGULAR_PIVOT, work);
+    if (state === 0)
+      throw new NotPositiveDefiniteError(
+        outerOf[kernels.failedUnknown.value]!,
+        kernels.failedPivot.value,
+        kernels.failedDiagonal.value,
+      );
+    filled = state === 1;
+    return filled;
+  };
   return {
     refresh(values) {
-      ensureLive();
-      if (released) throw new Error("the factor was released");
-      instance.reals(valueBuffer, values.length).set(values);
-      filled = kernels.factorize(factor, valueBuffer, SINGULAR_PIVOT) !== 0;
-      if (!filled)
-        throw new NotPositiveDefiniteError(
-          outerOf[kernels.failedUnknown.value]!,
-          kernels.failedPivot.value,
-          kernels.failedDiagonal.value,
-        );
+      begin(values);
+      goOn(Infinity);
+    },
+    *refreshInSteps(values) {
+      begin(values);
+      while (!goOn(STEP_WORK)) yield Math.min(1, kernels.factorizationWork() / kernels.factorWork.value);
     },
     solve(b, x) {
       ensureFilled();

@@ -28,6 +28,8 @@ export const krylov: Scheme = function* (system, start, options) {
   const workspace = options.workspace ?? createWorkspace();
   try {
     const kept = workspace.krylovSystem(system);
+    // The analysis may just have taken a while.
+    yield { fraction: 0 };
     const inner = kept.inner(system);
     const from = setHeld(inner.held, 0, toInner(kept.solver.numbering, start, start.slice()));
     const before = { ...workspace.counts };
@@ -103,7 +105,7 @@ class KrylovMarch {
   /** One span that ends at `to`; @returns where it begins: 0, or the instant from which on it is good enough */
   private *span(to: number, last: boolean): Generator<MarchProgress, number, void> {
     const share = this.firstInstant >= KRYLOV.lateShare * to ? KRYLOV.shiftLate : KRYLOV.shiftEarly;
-    const layer = this.system.layer(share * to);
+    const layer = yield* this.layer(share * to, to);
     const instants = this.checkInstants(to);
     const growing = this.driven.map((driven) => begin(driven, layer));
     let cap: number = last ? KRYLOV.mostVectors : KRYLOV.vectorsBeforeParting;
@@ -123,13 +125,28 @@ class KrylovMarch {
     }
   }
 
+  private *layer(shift: number, to: number): Generator<MarchProgress, KrylovLayer, void> {
+    const making = this.system.layer(shift);
+    for (;;) {
+      const step = making.next();
+      if (step.done) return step.value;
+      yield this.progress(to, FACTOR_SHARE * step.value);
+    }
+  }
+
   private *grow({ basis }: Growing, count: number, to: number): Generator<MarchProgress, void, void> {
     for (let k = 0; k < count && !basis.exhausted; k++) {
       basis.grow();
       this.vectors++;
-      const share = Math.min(1, basis.count / KRYLOV.vectorsBeforeParting);
-      yield { fraction: (this.options.duration - to * (1 - share)) / this.options.duration };
+      const grown = Math.min(1, basis.count / KRYLOV.vectorsBeforeParting);
+      yield this.progress(to, FACTOR_SHARE + (1 - FACTOR_SHARE) * grown);
     }
+  }
+
+  /** Spans come from the latest to the earliest, and the first is most of the work. */
+  private progress(to: number, share: number): MarchProgress {
+    const { duration } = this.options;
+    return { fraction: (duration - to * (1 - share)) / duration };
   }
 
   /** The instant from which on the estimate keeps to the tolerance: 0 when that is so from the first that matters. */
@@ -187,6 +204,8 @@ class KrylovMarch {
   }
 }
 
+/** Share of the work of a span that its factor is, for the progress shown. */
+const FACTOR_SHARE = 0.3;
 /** Eight check instants per decade. */
 const CHECK_RATIO = 10 ** (-1 / 8);
 /** Instants behind a knot, in units of the first instant that matters: the field bends there as it does at the start. */

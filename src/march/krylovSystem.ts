@@ -68,15 +68,21 @@ export class KrylovSystem {
     return { ...this.matrices, loads, held };
   }
 
-  /** A layer whose shift is near the one wished for; made when there is none. */
-  layer(shift: number): KrylovLayer {
+  /** A layer whose shift is near the one wished for; made when there is none, yielding the share of its factor. */
+  *layer(shift: number): Generator<number, KrylovLayer, void> {
     const known = this.layers.find(
       (layer) => Math.abs(Math.log(layer.shift / shift)) < Math.log(KRYLOV.shiftSlack),
     );
     if (known) return known;
     if (this.layers.length >= KRYLOV.layersKept) this.layers.shift()!.factor.release();
     const factor = this.solver.factor();
-    factor.refresh(shiftedMatrix(this.matrices, shift, this.values));
+    let made = false;
+    try {
+      yield* factor.refreshInSteps(shiftedMatrix(this.matrices, shift, this.values));
+      made = true;
+    } finally {
+      if (!made) factor.release();
+    }
     this.counts.factorizations++;
     const layer = new KrylovLayer(shift, factor, this.capacity);
     this.layers.push(layer);

@@ -108,6 +108,27 @@ describe.each(KINDS)("%s", (kind) => {
     }
   });
 
+  it("factors in steps as it does at once, and a factor left half done is empty", () => {
+    const graph = gridGraph(kind === "cholesky" ? 170 : 20, 1);
+    const pattern = patternOf(graph);
+    const values = randomPositiveDefinite(graph, pattern);
+    const solver = makeSolver(pattern, graph.coordinates, { kind });
+    const inner = gatherValues(solver.inner.source, values, new Float64Array(values.length));
+    const factor = solver.factor();
+    const shares = [...factor.refreshInSteps(inner)];
+    expect(shares.length).toBeGreaterThan(0);
+    expect(shares).toEqual([...shares].sort((a, b) => a - b));
+    const b = Float64Array.from({ length: graph.size }, seeded(2));
+    const x = new Float64Array(graph.size);
+    factor.solve(b, x);
+    expect(backwardError(solver.inner.pattern, inner, x, b)).toBeLessThan(1e-10);
+    if (kind === "cholesky") {
+      factor.refreshInSteps(inner).next();
+      expect(() => factor.solve(b, x)).toThrow("no matrix yet");
+    }
+    solver.release();
+  });
+
   it("solves M x + extra in one go as it does step by step", () => {
     const graph = gridGraph(20, 4);
     const pattern = patternOf(graph);

@@ -26,7 +26,10 @@ export interface KernelExports {
   reset(to: number): void;
   analyze(size: number, rowStart: number, columns: number, coordinates: number): void;
   newFactor(): number;
-  factorize(factor: number, values: number, least: number): number;
+  beginFactorization(factor: number, values: number): void;
+  /** 0 failed, 1 done, 2 more to do */
+  continueFactorization(factor: number, least: number, work: number): number;
+  factorizationWork(): number;
   solve(factor: number, x: number): void;
   multiplyAdd(values: number, x: number, z: number, y: number): void;
   factorPanel(panel: number, rows: number, width: number, reciprocals: number, least: number): number;

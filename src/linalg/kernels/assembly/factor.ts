@@ -31,45 +31,74 @@ export function newFactor(): usize {
 /** first column that failed, in inner numbers */
 export let failedUnknown: i32 = -1;
 
-/**
- * Numeric factorization.
- *
- * @param values  of the matrix, on the inner pattern
- * @param least   share of its diagonal entry below which a pivot counts as zero
- * @returns whether the matrix is positive definite; if not, see failedUnknown and the values in dense.ts
- */
-export function factorize(factor: usize, values: usize, least: f64): bool {
+// A factorization goes in stretches, so that whoever waits for it can look up in between.
+let nextSupernode: i32 = 0;
+let stackTop: i32 = 0;
+let workDone: f64 = 0;
+
+export const FAILED: i32 = 0;
+export const DONE: i32 = 1;
+export const MORE: i32 = 2;
+
+/** multiply-adds of the factorization so far, roughly */
+export function factorizationWork(): f64 {
+  return workDone;
+}
+
+/** Begin a numeric factorization of a matrix given by its values on the inner pattern. */
+export function beginFactorization(factor: usize, values: usize): void {
   const panels = panelsOf(factor);
   memory.fill(panels, 0, <usize>getInt(panelStart, supernodes) << 3);
   scatterValues(factor, panels, values);
-  let top = 0;
-  for (let s = 0; s < supernodes; s++) {
-    const begin = getInt(first, s);
-    const width = getInt(first, s + 1) - begin;
-    const count = getInt(rowsStart, s + 1) - getInt(rowsStart, s);
-    const panel = realAt(panels, getInt(panelStart, s));
-    const update = realAt(stack, top);
-    const bytes = <usize>(count * count) << 3;
-    let base = top;
-    memory.fill(update, 0, bytes);
-    for (let c = getInt(firstChild, s); c >= 0; c = getInt(nextSibling, c)) {
-      base = min(base, getInt(updateStart, c));
-      addChild(c, panel, width, update, count);
-    }
-    if (!factorPanel(panel, width + count, width, realAt(factor, begin), least)) {
-      failedUnknown = begin + failedColumn;
-      return false;
-    }
-    if (count > 0) {
-      const stride = <usize>width << 3;
-      const below = panel + stride * width;
-      subtractProductsTiled(update, <usize>count << 3, below, count, below, count, stride, width, true);
-      // The updates of the children are used up: move this one down to where they began.
-      if (base < top) memory.copy(realAt(stack, base), update, bytes);
-    }
-    setInt(updateStart, s, base);
-    top = base + count * count;
+  nextSupernode = 0;
+  stackTop = 0;
+  workDone = 0;
+}
+
+/**
+ * Go on with the factorization for about so many multiply-adds.
+ *
+ * @param least  share of its diagonal entry below which a pivot counts as zero
+ * @returns FAILED when the matrix is not positive definite (see failedUnknown and the values in dense.ts), DONE or MORE
+ */
+export function continueFactorization(factor: usize, least: f64, work: f64): i32 {
+  const panels = panelsOf(factor);
+  const until = workDone + work;
+  for (; nextSupernode < supernodes; nextSupernode++) {
+    if (workDone >= until) return MORE;
+    if (!eliminate(nextSupernode, factor, panels, least)) return FAILED;
   }
+  return DONE;
+}
+
+/** Assemble and eliminate one front, and put its update matrix on the stack. */
+function eliminate(s: i32, factor: usize, panels: usize, least: f64): bool {
+  const begin = getInt(first, s);
+  const width = getInt(first, s + 1) - begin;
+  const count = getInt(rowsStart, s + 1) - getInt(rowsStart, s);
+  const panel = realAt(panels, getInt(panelStart, s));
+  const update = realAt(stack, stackTop);
+  const bytes = <usize>(count * count) << 3;
+  let base = stackTop;
+  memory.fill(update, 0, bytes);
+  for (let c = getInt(firstChild, s); c >= 0; c = getInt(nextSibling, c)) {
+    base = min(base, getInt(updateStart, c));
+    addChild(c, panel, width, update, count);
+  }
+  if (!factorPanel(panel, width + count, width, realAt(factor, begin), least)) {
+    failedUnknown = begin + failedColumn;
+    return false;
+  }
+  if (count > 0) {
+    const stride = <usize>width << 3;
+    const below = panel + stride * width;
+    subtractProductsTiled(update, <usize>count << 3, below, count, below, count, stride, width, true);
+    // The updates of the children are used up: move this one down to where they began.
+    if (base < stackTop) memory.copy(realAt(stack, base), update, bytes);
+  }
+  setInt(updateStart, s, base);
+  stackTop = base + count * count;
+  workDone += 0.5 * <f64>width * <f64>(width + count) * <f64>(width + count);
   return true;
 }
 

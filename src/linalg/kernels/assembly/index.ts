@@ -15,5 +15,11 @@ export {
 } from "./analysis";
 export { factorEntries, factorWork } from "./supernodes";
 export { failedDiagonal, failedPivot, subtractProducts, factorPanel } from "./dense";
-export { failedUnknown, factorize, newFactor } from "./factor";
+export {
+  beginFactorization,
+  continueFactorization,
+  factorizationWork,
+  failedUnknown,
+  newFactor,
+} from "./factor";
 export { multiplyAdd, solve } from "./solve";
