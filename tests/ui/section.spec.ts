@@ -92,14 +92,14 @@ test("Escape puts a dragged point back", async ({ page }) => {
 test("the view stands still under a press, and the dragged point stays under the pointer", async ({
   page,
 }) => {
-  const from = await middleOf(pointName(page, 3));
+  const from = await middleOfPoint(page, 3);
   await page.mouse.move(from.x, from.y);
   await page.mouse.down();
   await page.waitForTimeout(400);
-  const held = await middleOf(pointName(page, 3));
+  const held = await middleOfPoint(page, 3);
   expect(Math.hypot(held.x - from.x, held.y - from.y)).toBeLessThan(1);
   await page.mouse.move(from.x + 24, from.y, { steps: 3 });
-  const moved = await middleOf(pointName(page, 3));
+  const moved = await middleOfPoint(page, 3);
   expect(Math.abs(moved.x - from.x - 24)).toBeLessThan(4);
   await page.mouse.up();
 });

@@ -102,8 +102,10 @@ function sideOf(layer: OutlineLayer, loop: SheetLoop, side: SheetSide): SVGTempl
     : side.joint
       ? "joint"
       : conditionWords(found, layer.document.stages[layer.stage], layer.units);
+  const within = layer.selection.kind === "region" && layer.selection.region === region;
   const state = [
     selected ? "on" : "",
+    within ? "within" : "",
     layer.faulty.has(sideKey(loop, side)) ? "faulty" : "",
     lacks ? "lacks" : "",
   ].join(" ");

@@ -2,12 +2,11 @@
  * The section: field, outline and everything that can be taken on it, between two graduated scales. It draws what it
  * is given and sends what the hand does; it works out nothing of the physics.
  */
-import { LitElement, html, nothing, svg } from "lit";
-import type { PropertyValues, SVGTemplateResult, TemplateResult } from "lit";
+import { LitElement, html, nothing } from "lit";
+import type { PropertyValues, TemplateResult } from "lit";
 import { customElement, property, query, state } from "lit/decorators.js";
 import type { MaterialLibrary } from "../../case/library.ts";
 import type { CaseDocument, CaseProblem } from "../../case/types.ts";
-import type { Place } from "../../editor/arcs.ts";
 import type { UnitSystem } from "../../case/units.ts";
 import { NOTHING, sameSelection } from "../../editor/selection.ts";
 import type { Selection } from "../../editor/selection.ts";
@@ -19,24 +18,20 @@ import { send } from "../events.ts";
 import type { Shown, Status } from "../state.ts";
 import { drawing, shared } from "../styles/shared.ts";
 import { captionSentence } from "./caption.ts";
-import { IsothermKeeper } from "./isothermsLayer.ts";
+import { BIG_BOARD, BoardDrawing } from "./boardDrawing.ts";
 import { BoardHand } from "./boardHand.ts";
 import type { Mode } from "./boardHand.ts";
-import { outlineUnder, sidesLayer } from "./outlineLayer.ts";
-import type { OutlineLayer } from "./outlineLayer.ts";
-import { faultsOf } from "./faults.ts";
+import { BoardKeys } from "./boardKeys.ts";
+import { MeshOverlay } from "./meshOverlay.ts";
 import { Painter, PLAIN_WORDS } from "./painter.ts";
 import { PICTURE_RATIO, sectionPicture } from "./picture.ts";
 import { readoutOf, sceneSentence } from "./readout.ts";
-import { pointers, rulers } from "./rulers.ts";
-import { inkFor, SceneKeeper, sceneValueAt } from "./scene.ts";
+import { SceneKeeper, sceneValueAt } from "./scene.ts";
 import type { Scene } from "./scene.ts";
 import { sectionStyle } from "./sectionStyle.ts";
 import { readSheet, sheetPlaces } from "./sheet.ts";
 import type { Sheet } from "./sheet.ts";
-import { balloonsLayer, faultsLayer, pointsLayer, probesLayer, sizesLayer } from "./thingsLayer.ts";
-import type { ThingsLayer } from "./thingsLayer.ts";
-import { placeOfSelection, threadPath } from "./thread.ts";
+import { placeOfSelection } from "./thread.ts";
 import { MODE_WORDS, sectionTools } from "./tools.ts";
 import { boundsOf } from "./view.ts";
 import type { Bounds, View } from "./view.ts";
@@ -47,8 +42,6 @@ import "./mend.ts";
 import "./tag.ts";
 import type { CorelagTag } from "./tag.ts";
 
-/** From this width of the board on, type and marks go one step up [px]. */
-const BIG_BOARD = 1000;
 /** Up to this width of the window the tag stands under the section [px]. */
 const NARROW = 760;
 
@@ -73,6 +66,8 @@ export class CorelagSection extends LitElement {
   @property() theme: "light" | "dark" = "light";
   @property({ attribute: false }) undoLabel: string | null = null;
   @property({ attribute: false }) library: MaterialLibrary = {};
+  /** the mesh is laid over the field */
+  @property({ type: Boolean }) meshShown = false;
 
   @state() private step: number | null = null;
   @state() mode: Mode = "take";
@@ -85,19 +80,17 @@ export class CorelagSection extends LitElement {
   sheet: Sheet = { loops: [], probes: [] };
   bounds: Bounds = boundsOf([]);
   readonly hand = new BoardHand(this);
+  readonly keys = new BoardKeys(this);
   readonly #keeper = new SceneKeeper();
   #painter: Painter | undefined;
+  #overlay: MeshOverlay | undefined;
   #stops: readonly Rgb[] = [];
-  #ghost: Sheet | null = null;
   #size = { width: 0, height: 0 };
   #observer = new ResizeObserver(() => this.#resized());
+  readonly #drawing = new BoardDrawing(this);
   readonly #holder = new BoardView(() => this.requestUpdate());
   /** what the field was last painted from */
   #painted: readonly unknown[] = [];
-  readonly #lines = new IsothermKeeper();
-  #scaled: { key: readonly unknown[]; drawn: SVGTemplateResult } = { key: [], drawn: svg`` };
-  #sought: { scene: Scene | null; values: Map<string, number> } = { scene: null, values: new Map() };
-
   override disconnectedCallback(): void {
     super.disconnectedCallback();
     this.#observer.disconnect();
@@ -120,7 +113,6 @@ export class CorelagSection extends LitElement {
   }
 
   protected override willUpdate(changed: PropertyValues<this>): void {
-    if (changed.has("earlier")) this.#ghost = this.earlier ? readSheet(this.earlier) : null;
     if (changed.has("document")) {
       this.sheet = readSheet(this.document);
       const fresh = boundsOf(sheetPlaces(this.sheet));
@@ -141,6 +133,7 @@ export class CorelagSection extends LitElement {
     )
       this.refit();
     this.#paint();
+    this.#layMesh();
   }
 
   // --- view -----------------------------------------------------------------------------------------------------------
@@ -169,12 +162,15 @@ export class CorelagSection extends LitElement {
     return { ...this.#size, left: this.#length("--scale"), foot: this.#length("--zrule") };
   }
 
-  /** The board's room, and what a card takes of it. */
-  get #room(): BoardRoom {
-    const narrow = window.innerWidth <= NARROW;
+  /** Room at the right that the tag or the mend card takes [px]; 0 without one. */
+  get cardWidth(): number {
     const mends = this.problems.length > 0 ? 26 : 0;
-    const card = narrow || (!this.tagged && mends === 0) ? 0 : this.#length("--tag") + mends + 10;
-    return { ...this.size, card, big: this.#size.width > BIG_BOARD };
+    if (window.innerWidth <= NARROW || (!this.tagged && mends === 0)) return 0;
+    return this.#length("--tag") + mends + 10;
+  }
+
+  get #room(): BoardRoom {
+    return { ...this.size, card: this.cardWidth, big: this.#size.width > BIG_BOARD };
   }
 
   /** Fits the part into the free room, in a short move where the eye should follow. */
@@ -211,6 +207,27 @@ export class CorelagSection extends LitElement {
 
   get #faint(): boolean {
     return this.status === "waiting" || this.status === "failed";
+  }
+
+  /** Lays the mesh over the field, or takes it off. */
+  #layMesh(): void {
+    const { result } = this;
+    const { width, height } = this.#size;
+    if (!this.meshShown || !result || width === 0) {
+      this.#overlay?.canvas.remove();
+      this.#overlay = undefined;
+      return;
+    }
+    this.#overlay ??= new MeshOverlay();
+    if (!this.#overlay.canvas.isConnected) this.lines.before(this.#overlay.canvas);
+    const colour = (name: string): string => getComputedStyle(this).getPropertyValue(name).trim();
+    this.#overlay.draw(result, {
+      view: this.view,
+      width,
+      height,
+      line: colour("--iso-dark"),
+      mark: colour("--bad"),
+    });
   }
 
   #paint(): void {
@@ -259,8 +276,8 @@ export class CorelagSection extends LitElement {
         @pointercancel=${this.hand.cancel}
         @pointerleave=${() => (this.pointer = null)}
         @wheel=${{ handleEvent: this.hand.wheel, passive: false }}
-        @keydown=${this.hand.key}
-        @focusin=${this.hand.focused}
+        @keydown=${this.keys.key}
+        @focusin=${this.keys.focused}
       >
         <svg
           class="lines"
@@ -268,7 +285,7 @@ export class CorelagSection extends LitElement {
           aria-roledescription="section drawing"
           aria-label=${this.#spokenName()}
         >
-          ${document && this.#size.width > 0 ? this.#drawing(document, scene) : nothing}
+          ${document && this.#size.width > 0 ? this.#drawing.draw(document, this.#faint ? null : scene, this.#stops) : nothing}
         </svg>
         <corelag-facts
           .document=${document}
@@ -283,81 +300,10 @@ export class CorelagSection extends LitElement {
     `;
   }
 
-  #drawing(document: CaseDocument, scene: Scene | null): TemplateResult {
-    const { width, height, left, foot } = this.size;
-    const { faults, sides } = faultsOf(this.problems, this.sheet);
-    const outline: OutlineLayer = {
-      document,
-      sheet: this.sheet,
-      ghost: this.#ghost,
-      view: this.view,
-      bounds: this.bounds,
-      units: this.units,
-      selection: this.selection,
-      stage: this.stageNow,
-      faulty: sides,
-      right: width - this.#room.card,
-    };
-    const field = this.#faint ? null : scene;
-    const things: ThingsLayer = {
-      ...outline,
-      answers: field ? (this.result?.answers ?? []) : [],
-      focusedAnswer: this.focusedAnswer,
-      arrivalOf: this.shown.by === "arrival" ? this.shown.answer : null,
-      valueAt: (place) => (field ? this.#valueAt(field, place) : Number.NaN),
-      inkAt: (place) =>
-        field ? inkFor(this.#stops, field.range, this.#valueAt(field, place)) : "var(--ink)",
-      faults,
-      big: width > BIG_BOARD,
-    };
-    const held = this.dragging ? placeOfSelection(this.sheet, this.selection) : null;
-    return svg`
-      ${this.#scales()}${held ? pointers(this.view, { width, height, left, foot }, held) : nothing}
-      ${
-        field
-          ? this.#lines.layer({
-              scene: field,
-              view: this.view,
-              bounds: this.bounds,
-              // while the hand moves the labels stay where the field still is
-              sheet: outline.ghost ?? this.sheet,
-              stops: this.#stops,
-              shown: this.shown,
-              units: this.units,
-              big: things.big,
-            })
-          : nothing
-      }
-      ${outlineUnder(outline)}${sizesLayer(things)}${sidesLayer(outline)}
-      ${field ? probesLayer(things) : probesLayer({ ...things, answers: [] })}
-      ${balloonsLayer(things)}${threadPath(this, faults)}${pointsLayer(things)}${faultsLayer(things)}
-    ` as unknown as TemplateResult;
-  }
-
   /** Number of the stage at the time cursor. */
   get stageNow(): number {
     const found = this.result?.stages.findIndex((stage) => this.cursor < stage.ended) ?? 0;
     return found >= 0 ? found : Math.max(0, (this.document?.stages.length ?? 1) - 1);
-  }
-
-  /** The scales, drawn again only when they change. */
-  #scales(): SVGTemplateResult {
-    const { width, height, left, foot } = this.size;
-    const key = [this.view, width, height, left, this.units];
-    if (!key.every((part, i) => part === this.#scaled.key[i]))
-      this.#scaled = { key, drawn: rulers(this.view, { width, height, left, foot }, this.units) };
-    return this.#scaled.drawn;
-  }
-
-  /** Value of the field at a place, sought once. */
-  #valueAt(scene: Scene, [r, z]: Place): number {
-    if (this.#sought.scene !== scene) this.#sought = { scene, values: new Map() };
-    const key = `${r} ${z}`;
-    const known = this.#sought.values.get(key);
-    if (known !== undefined) return known;
-    const value = sceneValueAt(scene, r, z);
-    this.#sought.values.set(key, value);
-    return value;
   }
 
   #spokenName(): string {

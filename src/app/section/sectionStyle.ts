@@ -141,6 +141,9 @@ export const sectionStyle = css`
     stroke: var(--hand);
     stroke-width: var(--lw-selected);
   }
+  .side.within .line {
+    stroke: var(--hand);
+  }
   .side.lacks .line {
     stroke: var(--bad);
     stroke-dasharray: 7 4;
@@ -290,6 +293,14 @@ export const sectionStyle = css`
   .balloons {
     pointer-events: none;
   }
+  svg text.coordinates {
+    fill: var(--hand);
+    font-size: var(--t-note);
+    font-weight: var(--w-firm);
+    paint-order: stroke;
+    stroke: var(--sheet);
+    stroke-width: 4px;
+  }
   .mark {
     stroke: var(--ink-3);
     stroke-width: 1;
@@ -308,9 +319,16 @@ export const sectionStyle = css`
     stroke-width: 2.25;
   }
 
-  @media (max-width: 1500px) {
-    .wide-only {
-      display: none;
+  /* where the sheet scrolls, a finger on the bare board scrolls it; things are still taken hold of */
+  @media (max-width: 1000px) {
+    .board {
+      touch-action: pan-y;
+    }
+    .side,
+    .point,
+    .probe,
+    .bulge {
+      touch-action: none;
     }
   }
   @media (max-width: 1340px) {

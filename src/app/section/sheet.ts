@@ -139,16 +139,18 @@ export function nearestOn(side: SheetSide, [r, z]: Place): { readonly at: Place;
   return best;
 }
 
-/** Whether a place lies inside the part (even-odd over all loops of any one region). */
+/** Whether a place lies inside the part. */
 export function insidePart(sheet: Sheet, place: Place): boolean {
   const regions = new Set(sheet.loops.map((loop) => loop.region));
-  return [...regions].some((region) => {
-    let inside = false;
-    for (const loop of sheet.loops)
-      if (loop.region === region)
-        for (const side of loop.sides) if (crossings(side.points, place) % 2 === 1) inside = !inside;
-    return inside;
-  });
+  return [...regions].some((region) => insideRegion(sheet, region, place));
+}
+
+/** Whether a place lies inside one region: an odd number of its sides lie beyond the place. */
+export function insideRegion(sheet: Sheet, region: number, place: Place): boolean {
+  let count = 0;
+  for (const loop of sheet.loops)
+    if (loop.region === region) for (const side of loop.sides) count += crossings(side.points, place);
+  return count % 2 === 1;
 }
 
 function crossings(points: readonly Place[], [r, z]: Place): number {

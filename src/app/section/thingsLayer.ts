@@ -11,7 +11,7 @@ import { temperature } from "../controls/figures.ts";
 import { dimensionRoom, dimensionsOf, drawDimension } from "./dimensions.ts";
 import type { Dimension } from "./dimensions.ts";
 import { coordinate } from "./rulers.ts";
-import { insidePart } from "./sheet.ts";
+import { insidePart, nearestOn } from "./sheet.ts";
 import type { Sheet, SheetLoop } from "./sheet.ts";
 import { vertexWords } from "./spoken.ts";
 import { fromScreen, toScreen } from "./view.ts";
@@ -31,6 +31,8 @@ export interface ThingsLayer {
   readonly valueAt: (place: Place) => number;
   /** colour of lines on the field there */
   readonly inkAt: (place: Place) => string;
+  /** the tag does not stand: a selected point says its coordinates itself */
+  readonly untagged: boolean;
   /** places of faults */
   readonly faults: readonly Place[];
   readonly big: boolean;
@@ -66,12 +68,20 @@ function sizeText(metres: number, units: UnitSystem): string {
   return String(Number(toShown(metres, "length", units).toFixed(units === "si" ? 1 : 3)));
 }
 
+/** m: nearer to a side than this a probe counts as on it */
+const ON_SIDE = 1e-6;
+
+function onOrInside(sheet: Sheet, place: Place): boolean {
+  if (insidePart(sheet, place)) return true;
+  return sheet.loops.some((loop) => loop.sides.some((side) => nearestOn(side, place).distance < ON_SIDE));
+}
+
 export function probesLayer(layer: ThingsLayer): SVGTemplateResult[] {
   return layer.sheet.probes.map((probe, index) => {
     if (!Number.isFinite(probe.at[0] + probe.at[1])) return svg``;
     const [x, y] = toScreen(layer.view, ...probe.at);
     const value = layer.valueAt(probe.at);
-    const outside = !Number.isFinite(value) && layer.answers.length > 0;
+    const outside = !onOrInside(layer.sheet, probe.at);
     const ink = outside ? "var(--ink-2)" : layer.inkAt(probe.at);
     const selected = sameSelection(layer.selection, { kind: "probe", index });
     const says = outside ? "outside" : Number.isFinite(value) ? temperature(value, layer.units).text : "";
@@ -153,8 +163,13 @@ function pointOf(layer: ThingsLayer, loop: SheetLoop, index: number): SVGTemplat
     aria-label=${vertexWords(loop, index, layer.units)} aria-pressed=${selected}>
     <circle class="hit" cx=${x} cy=${y} r="13"></circle>
     ${selected ? svg`<circle class="halo" cx=${x} cy=${y} r="13"></circle>` : nothing}
+    ${selected && layer.untagged ? coordinatesAt(layer, at, x, y) : nothing}
     <rect class="box" x=${x - 4} y=${y - 4} width="8" height="8"></rect>
   </g>`;
+}
+
+function coordinatesAt({ units }: ThingsLayer, [r, z]: Place, x: number, y: number): SVGTemplateResult {
+  return svg`<text class="coordinates" x=${x + 16} y=${y - 12}>r ${coordinate(r, units)}  z ${coordinate(z, units)}</text>`;
 }
 
 /** The round grip in the middle of an arc: shown while the side or one of its ends is selected. */
