@@ -4,6 +4,11 @@ import { NotConvergedError, NotPositiveDefiniteError } from "./errors.ts";
 import { multiply, type SparsityPattern } from "./pattern.ts";
 import { addScaled, dot } from "./vectors.ts";
 
+/** out = A x; `out` is not `x`. */
+export interface LinearOperator {
+  multiply(x: Float64Array, out: Float64Array): unknown;
+}
+
 /** out = P r, where P is symmetric positive definite and near the inverse of the matrix. */
 export interface Preconditioner {
   apply(residual: Float64Array, out: Float64Array): void;
@@ -32,6 +37,11 @@ export function conjugateGradientsWork(size: number): ConjugateGradientsWork {
   };
 }
 
+/** A matrix by its pattern and values, as an operator. */
+export const sparseOperator = (pattern: SparsityPattern, values: Float64Array): LinearOperator => ({
+  multiply: (x, out) => multiply(pattern, values, x, out),
+});
+
 /** Preconditioner that divides by the diagonal. */
 export function diagonalPreconditioner(pattern: SparsityPattern, values: Float64Array): Preconditioner {
   const inverse = Float64Array.from(pattern.diagonal, (place) => 1 / values[place]!);
@@ -51,8 +61,7 @@ export function diagonalPreconditioner(pattern: SparsityPattern, values: Float64
  * @throws NotConvergedError at the iteration limit
  */
 export function conjugateGradients(
-  pattern: SparsityPattern,
-  values: Float64Array,
+  matrix: LinearOperator,
   b: Float64Array,
   preconditioner: Preconditioner,
   work: ConjugateGradientsWork,
@@ -62,9 +71,9 @@ export function conjugateGradients(
   const aim = options.relativeResidual ?? RELATIVE_RESIDUAL;
   const limit =
     options.iterationLimit ??
-    Math.max(LEAST_ITERATION_LIMIT, ITERATIONS_PER_ROOT_SIZE * Math.ceil(Math.sqrt(pattern.size)));
+    Math.max(LEAST_ITERATION_LIMIT, ITERATIONS_PER_ROOT_SIZE * Math.ceil(Math.sqrt(b.length)));
   const { residual, preconditioned, direction, image } = work;
-  multiply(pattern, values, x, image);
+  matrix.multiply(x, image);
   for (let i = 0; i < b.length; i++) residual[i] = b[i]! - image[i]!;
   const bSquare = dot(b, b);
   const goal = aim * aim * bSquare;
@@ -73,7 +82,7 @@ export function conjugateGradients(
   direction.set(preconditioned);
   let product = dot(residual, preconditioned);
   for (let iteration = 1; iteration <= limit; iteration++) {
-    multiply(pattern, values, direction, image);
+    matrix.multiply(direction, image);
     const curvature = dot(direction, image);
     if (!(curvature > 0)) throw new NotPositiveDefiniteError(-1, curvature, 0);
     const length = product / curvature;

@@ -7,7 +7,7 @@
  * and gives after the analysis is in its own ("inner") numbering: see numbering.ts.
  */
 import { bandOrdering } from "./bandOrdering.ts";
-import { conjugateGradients, conjugateGradientsWork } from "./conjugateGradients.ts";
+import { conjugateGradients, conjugateGradientsWork, sparseOperator } from "./conjugateGradients.ts";
 import { RELATIVE_RESIDUAL } from "./defaults.ts";
 import { NotPositiveDefiniteError } from "./errors.ts";
 import { graphCoordinates } from "./graphCoordinates.ts";
@@ -115,6 +115,7 @@ export function conjugateGradientsSolver(
       const preconditioner = incompleteCholesky(inner.pattern);
       const own = new Float64Array(inner.source.length);
       const b = new Float64Array(pattern.size);
+      const operator = sparseOperator(inner.pattern, own);
       const refresh = (values: Float64Array) => {
         own.set(values);
         withOuterNumber(numbering, () => preconditioner.refresh(own));
@@ -126,11 +127,11 @@ export function conjugateGradientsSolver(
           yield 0;
           refresh(values);
         },
-        solve: (rhs, x) => conjugateGradients(inner.pattern, own, rhs, preconditioner, work, aim, x),
+        solve: (rhs, x) => conjugateGradients(operator, rhs, preconditioner, work, aim, x),
         solveProduct(matrix, x, extra, out) {
           matrix.multiply(x, b);
           for (let i = 0; i < b.length; i++) b[i]! += extra[i]!;
-          return conjugateGradients(inner.pattern, own, b, preconditioner, work, aim, out);
+          return conjugateGradients(operator, b, preconditioner, work, aim, out);
         },
         release: nothing,
       };

@@ -49,7 +49,8 @@ export interface StageHistory {
   at(time: number, out: Float64Array): Float64Array;
   /**
    * Integral of u over [0, time] for a `time` among `times`, weighed as the scheme itself weighs it, into `out`, so that
-   * C (u - u0) + K (integral of u) = sum of p_g (integral of a_g) holds on the free unknowns to the tolerance of the solves.
+   * C (u - u0) + K (integral of u) = sum of p_g (integral of a_g) holds on the free unknowns to the tolerance of the solves;
+   * u0 is the field at time 0, held unknowns at their held values.
    */
   integral(time: number, out: Float64Array): Float64Array;
   /** integral of a signal over [0, time] in the same sense */

@@ -3,6 +3,7 @@ import {
   conjugateGradients,
   conjugateGradientsWork,
   diagonalPreconditioner,
+  sparseOperator,
 } from "../../src/linalg/conjugateGradients.ts";
 import { NotConvergedError, NotPositiveDefiniteError } from "../../src/linalg/errors.ts";
 import { incompleteCholesky } from "../../src/linalg/incompleteCholesky.ts";
@@ -26,7 +27,14 @@ describe("conjugate gradients", () => {
   const b = Float64Array.from({ length: graph.size }, random);
   const exact = denseSolve(denseOf(pattern, values), b);
   const run = (preconditioner: ReturnType<typeof diagonalPreconditioner>, x: Float64Array) =>
-    conjugateGradients(pattern, values, b, preconditioner, conjugateGradientsWork(b.length), {}, x);
+    conjugateGradients(
+      sparseOperator(pattern, values),
+      b,
+      preconditioner,
+      conjugateGradientsWork(b.length),
+      {},
+      x,
+    );
   const incomplete = incompleteCholesky(pattern);
   incomplete.refresh(values);
 
@@ -50,8 +58,7 @@ describe("conjugate gradients", () => {
     const indefinite = values.map((value) => -value);
     const solve = () =>
       conjugateGradients(
-        pattern,
-        indefinite,
+        sparseOperator(pattern, indefinite),
         b,
         diagonalPreconditioner(pattern, values),
         conjugateGradientsWork(b.length),
@@ -64,8 +71,7 @@ describe("conjugate gradients", () => {
   it("say how far they came when the limit is reached", () => {
     const solve = () =>
       conjugateGradients(
-        pattern,
-        values,
+        sparseOperator(pattern, values),
         b,
         incomplete,
         conjugateGradientsWork(b.length),
@@ -115,7 +121,7 @@ describe("incomplete factor", () => {
     expect(factor.shift).toBeGreaterThan(0);
     const b = Float64Array.of(1, 2, 3, 4);
     const x = new Float64Array(4);
-    conjugateGradients(pattern, values, b, factor, conjugateGradientsWork(4), {}, x);
+    conjugateGradients(sparseOperator(pattern, values), b, factor, conjugateGradientsWork(4), {}, x);
     denseSolve(kershaw, b).forEach((value, i) => expect(x[i]).toBeCloseTo(value, 8));
   });
 });
