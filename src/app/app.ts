@@ -69,6 +69,7 @@ export class CorelagApp extends LitElement {
       s.units,
       s.theme,
       s.pane,
+      s.meshShown,
       s.message,
       s.undoLabel,
       s.redoLabel,
@@ -178,6 +179,7 @@ export class CorelagApp extends LitElement {
     on("corelag-units", (units) => void (s.units.value = units));
     on("corelag-theme", (theme) => void (s.theme.value = theme));
     on("corelag-do", (deed) => this.perform(deed));
+    on("corelag-mesh", (shown) => void (s.meshShown.value = shown));
   }
 
   /** The section as it stands, as a PNG. */
@@ -284,6 +286,7 @@ export class CorelagApp extends LitElement {
       .status=${s.status.value}
       .dragging=${s.dragging.value}
       .cursor=${s.cursor.value}
+      .meshShown=${s.meshShown.value}
       .selection=${s.selection.value}
       .focusedAnswer=${s.focusedAnswer.value}
       .shown=${s.shown.value}
@@ -326,6 +329,7 @@ export class CorelagApp extends LitElement {
       .shown=${s.shown.value}
       .units=${s.units.value}
       .pane=${s.pane.value}
+      .meshShown=${s.meshShown.value}
     ></corelag-pane>`;
   }
 

@@ -25,6 +25,8 @@ export interface EventDetails {
   "corelag-units": UnitSystem;
   "corelag-theme": Theme;
   "corelag-do": Deed;
+  /** whether the mesh is laid over the section */
+  "corelag-mesh": boolean;
 }
 
 /** Whole-case deeds of the head and the keys. */
@@ -62,5 +64,6 @@ declare global {
     "corelag-units": CustomEvent<EventDetails["corelag-units"]>;
     "corelag-theme": CustomEvent<EventDetails["corelag-theme"]>;
     "corelag-do": CustomEvent<EventDetails["corelag-do"]>;
+    "corelag-mesh": CustomEvent<EventDetails["corelag-mesh"]>;
   }
 }

@@ -68,6 +68,8 @@ export class AppState {
   readonly units = signal<UnitSystem>("si");
   readonly theme = signal<Theme>("system");
   readonly pane = signal<Pane>("answers");
+  /** the mesh is laid over the section */
+  readonly meshShown = signal(false);
   /** a short plain message for the page's live region, for example after opening a file that could not be read */
   readonly message = signal("");
 

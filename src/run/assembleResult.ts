@@ -1,5 +1,6 @@
 /** Everything a run found, put into the shape that is handed over. */
 import { meshQuality } from "../../mesh/quality.ts";
+import type { TriangleMesh } from "../../mesh/types.ts";
 import type { Case } from "../case/types.ts";
 import { answerByEstimates } from "../compare/compareAnswer.ts";
 import type { ComparisonContext } from "../compare/compareAnswer.ts";
@@ -41,7 +42,7 @@ export function assembleResult(gathered: Gathered): CaseResult {
   return {
     title: input.title,
     mesh: meshFacts(level, profile),
-    section: { nodes: level.part.mesh.nodes, triangles, triangleRegion },
+    section: { nodes: level.part.mesh.nodes, triangles, triangleRegion, elements: level.mesh.triangles },
     frames,
     run: runFacts(gathered, level),
     stages: level.timeline.stages.map(({ name, began, ended }) => ({ name, began, ended })),
@@ -56,17 +57,26 @@ export function assembleResult(gathered: Gathered): CaseResult {
 }
 
 function meshFacts(level: Level, profile: Profile): MeshFacts {
-  const { minAngleDeg, meanQuality } = meshQuality(level.mesh);
+  const { minAngleDeg, maxAngleDeg, meanQuality, histogram, worstTriangle } = meshQuality(level.mesh);
   return {
     nodes: level.part.start.length,
     triangles: level.mesh.triangles.length / 3,
     minAngleDeg,
     meanQuality,
+    maxAngleDeg,
+    angleHistogram: Array.from(histogram),
+    worstPlace: middleOf(level.mesh, worstTriangle),
     volume: profile.volume,
     exposedArea: profile.exposedArea,
     meshVolume: level.part.volume,
     meshExposedArea: level.part.exposedArea,
   };
+}
+
+function middleOf({ nodes, triangles }: TriangleMesh, triangle: number): [number, number] {
+  const corners = [0, 1, 2].map((corner) => 2 * triangles[3 * triangle + corner]!);
+  const mean = (offset: number): number => corners.reduce((sum, at) => sum + nodes[at + offset]!, 0) / 3;
+  return [mean(0), mean(1)];
 }
 
 function runFacts({ levels, element, stated, seconds }: Gathered, level: Level): RunFacts {

@@ -14,6 +14,11 @@ export interface MeshFacts {
   readonly minAngleDeg: number;
   /** mean of 4 sqrt(3) A / (l1^2 + l2^2 + l3^2): 1 for equilateral triangles */
   readonly meanQuality: number;
+  readonly maxAngleDeg: number;
+  /** triangles by their smallest angle, in equal steps from 0 to 60 degrees */
+  readonly angleHistogram: readonly number[];
+  /** middle of the triangle with the smallest angle: r, z [m] */
+  readonly worstPlace: readonly [number, number];
   /** of the part, from its outline (Pappus) [m3], [m2] */
   readonly volume: number;
   readonly exposedArea: number;
@@ -28,6 +33,8 @@ export interface SectionMesh {
   readonly nodes: Float64Array;
   readonly triangles: Uint32Array;
   readonly triangleRegion: Uint16Array;
+  /** corner nodes of the elements themselves, 3 each: the mesh as it was solved */
+  readonly elements: Uint32Array;
 }
 
 /** The field at chosen instants, ascending; linear in time between them is good enough to look at. */

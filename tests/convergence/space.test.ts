@@ -18,6 +18,7 @@ import {
   conjugateGradientsWork,
   diagonalPreconditioner,
 } from "../../src/linalg/conjugateGradients.ts";
+import { multiply } from "../../src/linalg/pattern.ts";
 import { fieldErrors } from "../helpers/fieldErrors.ts";
 import { observedOrders } from "../helpers/observedOrder.ts";
 
@@ -75,8 +76,7 @@ function solveInside(elements: ElementMesh, onAxis: (r: number) => boolean): Flo
   const work = conjugateGradientsWork(pattern.size);
   const preconditioner = diagonalPreconditioner(pattern, conduction);
   conjugateGradients(
-    pattern,
-    conduction,
+    { multiply: (x, out) => multiply(pattern, conduction, x, out) },
     load,
     preconditioner,
     work,

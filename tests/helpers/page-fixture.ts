@@ -157,6 +157,9 @@ export function fixtureResult(): CaseResult {
       triangles: 4020,
       minAngleDeg: 29.3,
       meanQuality: 0.94,
+      maxAngleDeg: 112,
+      angleHistogram: [0, 0, 0, 0, 0, 0, 0, 0, 0, 2, 5, 10, 30, 90, 300, 700, 900, 1000, 700, 283],
+      worstPlace: [0.1, 0.5],
       volume: 0.0937,
       exposedArea: 1.23,
       meshVolume: 0.09369,
@@ -166,6 +169,7 @@ export function fixtureResult(): CaseResult {
       nodes: Float64Array.of(0, 0, 0.2, 0, 0.16, 0.9, 0, 0.94),
       triangles: Uint32Array.of(0, 1, 2, 0, 2, 3),
       triangleRegion: Uint16Array.of(0, 0),
+      elements: Uint32Array.of(0, 1, 2, 0, 2, 3),
     },
     frames: {
       times: Float64Array.of(0, end),

@@ -24,6 +24,26 @@ test("the proof is accessible and says what was kept", async ({ page }) => {
   await expectAccessible(page, "corelag-pane");
 });
 
+test("the mesh is laid over the section and taken off again, its shapes told as bars and in words", async ({
+  page,
+}) => {
+  await page.getByRole("tab", { name: "Proof" }).click();
+  await expect(
+    page.getByRole("img", { name: /Sharpest corner of each triangle.*the worst has \d+/ }),
+  ).toBeVisible();
+  const overlay = page.locator("corelag-section canvas.mesh");
+  await expect(overlay).toHaveCount(0);
+  await page.getByRole("button", { name: "Lay the mesh over the section" }).click();
+  await expect(overlay).toHaveCount(1);
+  const inked = await overlay.evaluate((canvas: HTMLCanvasElement) => {
+    const { data } = canvas.getContext("2d")!.getImageData(0, 0, canvas.width, canvas.height);
+    return data.reduce((count, value, i) => count + (i % 4 === 3 && value > 0 ? 1 : 0), 0);
+  });
+  expect(inked).toBeGreaterThan(2000);
+  await page.getByRole("button", { name: "Take the mesh off the section" }).click();
+  await expect(overlay).toHaveCount(0);
+});
+
 test("curves are saved as CSV, named after the case", async ({ page }) => {
   await page.getByRole("tab", { name: "Hand-over" }).click();
   await expectAccessible(page, "corelag-pane");

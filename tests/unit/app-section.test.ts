@@ -25,6 +25,7 @@ const plate = {
   nodes: Float64Array.of(0, 0, 1, 0, 1, 1, 0, 1, 0.5, 0.5),
   triangles: Uint32Array.of(0, 1, 4, 1, 2, 4, 2, 3, 4, 3, 0, 4),
   triangleRegion: new Uint16Array(4),
+  elements: Uint32Array.of(0, 1, 4, 1, 2, 4, 2, 3, 4, 3, 0, 4),
 };
 const linear = (f: (r: number, z: number) => number): Float32Array =>
   Float32Array.from({ length: plate.nodes.length / 2 }, (_, i) =>

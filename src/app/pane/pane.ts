@@ -108,6 +108,7 @@ export class CorelagPane extends LitElement {
   @property({ attribute: false }) shown: Shown = { by: "temperature" };
   @property() units: UnitSystem = "si";
   @property() pane: Pane = "answers";
+  @property({ type: Boolean }) meshShown = false;
   @query("corelag-answers") private answers!: CorelagAnswers | null;
 
   override connectedCallback(): void {
@@ -148,6 +149,7 @@ export class CorelagPane extends LitElement {
         .result=${result}
         .stale=${stale}
         .units=${units}
+        .meshShown=${this.meshShown}
       ></corelag-proof>`;
     if (this.pane === "hand")
       return html`<corelag-handover

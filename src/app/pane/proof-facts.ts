@@ -21,6 +21,9 @@ export interface FactGroup {
   readonly facts: readonly Fact[];
 }
 
+/** The group that also carries the picture of the triangles. */
+export const MESH_TITLE = "Mesh";
+
 /** Share of the largest exchanged heat that may stay unaccounted for. */
 const ENERGY_LIMIT = 1e-6;
 /** Sharpest corner [degrees] below which a mesh is frowned upon. */
@@ -34,7 +37,7 @@ export function proofOf(document: CaseDocument, result: CaseResult, system: Unit
   return [
     { title: "How sure", facts: sureFacts(document, result, system) },
     { title: "Heat", facts: heatFacts(result, system) },
-    { title: "Mesh", facts: meshFacts(result) },
+    { title: MESH_TITLE, facts: meshFacts(result) },
     { title: "Outline against mesh", facts: sizeFacts(result, system) },
     { title: "Time", facts: timeFacts(result, system) },
     { title: "Quick estimates", facts: estimateFacts(result, system) },
@@ -127,8 +130,8 @@ function meshFacts({ mesh, run }: CaseResult): Fact[] {
       note: run.element === 6 ? "six nodes each" : "three nodes each",
     },
     {
-      name: "sharpest corner",
-      value: `${digits(mesh.minAngleDeg, 1)}\u00b0`,
+      name: "sharpest corner, widest",
+      value: `${digits(mesh.minAngleDeg, 1)}\u00b0, ${digits(mesh.maxAngleDeg, 1)}\u00b0`,
       check: mesh.minAngleDeg >= ANGLE_LIMIT ? "kept" : "broken",
     },
     { name: "mean quality", value: digits(mesh.meanQuality, 3), note: "1 is equilateral" },
@@ -165,17 +168,21 @@ function sizeWords(value: number, dimension: "volume" | "area", system: UnitSyst
   return `${quantity(value / size, "share", system).text}\u00a0${unit}`;
 }
 
-const SCHEMES: Readonly<Record<RunFacts["scheme"], string>> = {
-  "implicit-euler": "implicit Euler, step by step",
-  "tr-bdf2": "TR-BDF2, second order, steps as needed",
-  krylov: "rational Krylov, exact in time to the tolerance",
+const SCHEMES: Readonly<Record<RunFacts["scheme"], Pick<Fact, "value" | "note">>> = {
+  "implicit-euler": { value: "implicit Euler", note: "step by step" },
+  "tr-bdf2": { value: "TR-BDF2", note: "second order, steps as needed" },
+  krylov: { value: "rational Krylov", note: "exact in time to the tolerance" },
 };
 
 function timeFacts({ run }: CaseResult, system: UnitSystem): Fact[] {
   return [
-    { name: "scheme", value: SCHEMES[run.scheme] },
+    { name: "scheme", ...SCHEMES[run.scheme] },
     { name: "steps", value: digits(run.steps, 0), note: `${digits(run.rejectedSteps, 0)} tried again` },
-    { name: "solves", value: digits(run.solves, 0), note: `${digits(run.factorizations, 0)} factors` },
+    {
+      name: "solves",
+      value: digits(run.solves, 0),
+      note: run.factorizations === 1 ? "1 factor" : `${digits(run.factorizations, 0)} factors`,
+    },
     {
       name: "error in time",
       value: timeError(run.timeError, system),

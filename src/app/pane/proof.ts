@@ -4,9 +4,11 @@ import { customElement, property } from "lit/decorators.js";
 import type { CaseDocument } from "../../case/types.ts";
 import type { UnitSystem } from "../../case/units.ts";
 import type { CaseResult } from "../../run/result.ts";
+import { send } from "../events.ts";
 import { icon } from "../icons.ts";
 import { shared } from "../styles/shared.ts";
-import { proofOf } from "./proof-facts.ts";
+import { angleBars, meshQualityStyle, meshSwitch } from "./mesh-quality.ts";
+import { MESH_TITLE, proofOf } from "./proof-facts.ts";
 import type { Fact } from "./proof-facts.ts";
 
 /** The proof: what was checked of the sums, in plain words, with a mark where a check was kept or broken. */
@@ -14,6 +16,7 @@ import type { Fact } from "./proof-facts.ts";
 export class CorelagProof extends LitElement {
   static override styles = [
     shared,
+    meshQualityStyle,
     css`
       :host {
         display: block;
@@ -89,6 +92,8 @@ export class CorelagProof extends LitElement {
   @property({ attribute: false }) document: CaseDocument | null = null;
   @property({ attribute: false }) result: CaseResult | null = null;
   @property({ type: Boolean }) stale = false;
+  /** whether the mesh is laid over the section */
+  @property({ type: Boolean }) meshShown = false;
   @property() units: UnitSystem = "si";
 
   protected override render(): TemplateResult {
@@ -103,9 +108,14 @@ export class CorelagProof extends LitElement {
           html`<section class=${this.stale ? "old" : ""}>
             <h2>${title}</h2>
             <dl>${facts.map((fact) => this.fact(fact))}</dl>
+            ${title === MESH_TITLE ? this.meshPicture(this.result!) : nothing}
           </section>`,
       )}
       ${this.warnings(this.result)}`;
+  }
+
+  private meshPicture({ mesh }: CaseResult): TemplateResult {
+    return html`${angleBars(mesh)}${meshSwitch(this.meshShown, () => send(this, "corelag-mesh", !this.meshShown))}`;
   }
 
   private fact({ name, value, note, check }: Fact): TemplateResult {

@@ -34,7 +34,7 @@ export function elementEdges(elements: Uint32Array): Uint32Array {
 export class MeshOverlay {
   readonly canvas = document.createElement("canvas");
   #elements: Uint32Array | null = null;
-  #edges = new Uint32Array(0);
+  #edges: Uint32Array = new Uint32Array(0);
 
   constructor() {
     this.canvas.className = "field mesh";

@@ -12,7 +12,7 @@ import { NOTHING, sameSelection } from "../../editor/selection.ts";
 import type { Selection } from "../../editor/selection.ts";
 import type { Profile } from "../../profile/types.ts";
 import type { CaseResult } from "../../run/result.ts";
-import { parseHex, readStops } from "../colours.ts";
+import { parseColour, readStops } from "../colours.ts";
 import type { Rgb } from "../colours.ts";
 import { send } from "../events.ts";
 import type { Shown, Status } from "../state.ts";
@@ -202,7 +202,9 @@ export class CorelagSection extends LitElement {
 
   get scene(): Scene | null {
     const { result, cursor, shown, step } = this;
-    return result ? this.#keeper.scene({ result, cursor, shown, step, scale: this.view.scale }) : null;
+    return result
+      ? this.#keeper.scene({ result, cursor, shown, step, units: this.units, scale: this.view.scale })
+      : null;
   }
 
   get #faint(): boolean {
@@ -248,7 +250,7 @@ export class CorelagSection extends LitElement {
       range: scene.range,
       stops: this.#stops,
       view: this.view,
-      sheet: parseHex(getComputedStyle(this).getPropertyValue("--sheet").trim()),
+      sheet: parseColour(getComputedStyle(this).backgroundColor),
       veil: Number.parseFloat(getComputedStyle(this).getPropertyValue("--mirror-veil")) || 0.5,
       ghost: faint,
       width,
@@ -293,10 +295,10 @@ export class CorelagSection extends LitElement {
           .units=${this.units}
           .library=${this.library}
         ></corelag-facts>
-        ${narrow ? nothing : this.#card(scene)}${readoutOf(this, scene)}
+        ${narrow ? nothing : this.#cards(scene)}${readoutOf(this, scene)}
         ${scene && !this.#faint ? html`<p class="heard">${sceneSentence(this, scene)}</p>` : nothing}
       </div>
-      ${narrow ? this.#card(scene) : nothing}
+      ${narrow ? this.#cards(scene) : nothing}
     `;
   }
 
@@ -316,15 +318,28 @@ export class CorelagSection extends LitElement {
     return `Section of the ${name}, ${half} half editable. ${count(points, "point")}, ${count(sides, "side")}, ${count(probes.length, "probe")}.`;
   }
 
-  #card(scene: Scene | null): TemplateResult | typeof nothing {
-    if (this.problems.length > 0 && !this.dragging)
-      return html`<corelag-mend
-        .document=${this.document}
-        .problems=${this.problems}
-        .undoLabel=${this.undoLabel}
-      ></corelag-mend>`;
-    if (!this.tagged) return nothing;
+  /** The mend card while something is at fault, and the tag of what is selected. */
+  #cards(scene: Scene | null): TemplateResult | typeof nothing {
+    const mends = this.problems.length > 0 && !this.dragging;
+    if (!mends && !this.tagged) return nothing;
+    return html`<div class="cards ${mends ? "mends" : ""}">
+      ${
+        mends
+          ? html`<corelag-mend
+              .document=${this.document}
+              .problems=${this.problems}
+              .selection=${this.selection}
+              .undoLabel=${this.undoLabel}
+            ></corelag-mend>`
+          : nothing
+      }
+      ${this.tagged ? this.#tag(scene) : nothing}
+    </div>`;
+  }
+
+  #tag(scene: Scene | null): TemplateResult {
     const place = placeOfSelection(this.sheet, this.selection);
+    const known = scene && place && this.shown.by === "temperature" && !this.#faint;
     return html`<corelag-tag
       .document=${this.document}
       .earlier=${this.earlier}
@@ -333,7 +348,7 @@ export class CorelagSection extends LitElement {
       .stageNow=${this.stageNow}
       .amounts=${amountsOf(this.profile)}
       .amountsBefore=${amountsOf(this.profileEarlier)}
-      .temperature=${scene && place && this.shown.by === "temperature" ? sceneValueAt(scene, ...place) : Number.NaN}
+      .temperature=${known ? sceneValueAt(scene, ...place) : Number.NaN}
       .library=${this.library}
     ></corelag-tag>`;
   }
