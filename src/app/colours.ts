@@ -21,6 +21,12 @@ export function parseHex(hex: string): Rgb {
   return [(value >> 16) & 255, (value >> 8) & 255, value & 255];
 }
 
+/** A colour as the browser states it when computed: "rgb(247, 250, 248)". */
+export function parseColour(text: string): Rgb {
+  const [red = 255, green = 255, blue = 255] = (text.match(/[\d.]+/g) ?? []).map(Number);
+  return [red, green, blue];
+}
+
 /** The colour at a share of the map, 0 cold to 1 hot; held at the ends. */
 export function colourAt(stops: readonly Rgb[], share: number): Rgb {
   const at = Math.min(1, Math.max(0, share)) * (stops.length - 1);

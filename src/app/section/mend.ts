@@ -4,11 +4,15 @@ import type { TemplateResult } from "lit";
 import { customElement, property } from "lit/decorators.js";
 import { pathSteps } from "../../case/path.ts";
 import type { CaseDocument, CaseProblem } from "../../case/types.ts";
+import { conditionOf } from "../../editor/conditions.ts";
 import { FEWEST_VERTICES, removeVertex } from "../../editor/outline.ts";
 import type { LoopIndex } from "../../editor/outline.ts";
+import { NOTHING } from "../../editor/selection.ts";
+import type { Selection } from "../../editor/selection.ts";
 import { send, sendEdit } from "../events.ts";
 import { icon } from "../icons.ts";
 import { shared } from "../styles/shared.ts";
+import { readSheet } from "./sheet.ts";
 import { capital } from "./spoken.ts";
 
 /** The point or side that a path of the document leads to; null where it leads elsewhere. */
@@ -39,8 +43,6 @@ export class CorelagMend extends LitElement {
           0 calc(100% - var(--chamfer)),
           0 var(--chamfer)
         );
-        max-height: var(--tag-room, 420px);
-        overflow: auto;
       }
       h2 {
         color: var(--bad);
@@ -73,6 +75,7 @@ export class CorelagMend extends LitElement {
 
   @property({ attribute: false }) document: CaseDocument | null = null;
   @property({ attribute: false }) problems: readonly CaseProblem[] = [];
+  @property({ attribute: false }) selection: Selection = NOTHING;
   /** what undo would take back; null when there is nothing */
   @property({ attribute: false }) undoLabel: string | null = null;
 
@@ -90,28 +93,57 @@ export class CorelagMend extends LitElement {
     </div>`;
   }
 
-  private acts(problem: CaseProblem): TemplateResult {
+  /** The point to act on: the selected one in an outline that is at fault, else where the fault says. */
+  private pointOf(problem: CaseProblem): LoopIndex | null {
     const place = placeOfPath(problem.path);
+    return place && this.selection.kind === "vertex" ? this.selection : place;
+  }
+
+  /** A side that lacks a condition is taken into the tag, where one is picked. */
+  private conditionActs(problem: CaseProblem): TemplateResult {
+    const stage = pathSteps(problem.path)[1];
+    const found = typeof stage === "number" ? sideWithout(this.document!, stage) : null;
+    return html`${this.undoAct()}${
+      found
+        ? html`<button class="act" @click=${() => send(this, "corelag-select", { kind: "side", ...found })}>
+            Pick one for it
+          </button>`
+        : nothing
+    }`;
+  }
+
+  private undoAct(): TemplateResult | typeof nothing {
+    if (this.undoLabel === null) return nothing;
+    return html`<button class="act main" @click=${() => send(this, "corelag-do", { kind: "undo" })}>
+      ${putBackWords(this.undoLabel)}
+    </button>`;
+  }
+
+  private acts(problem: CaseProblem): TemplateResult {
+    if (problem.code === "side-without-condition") return this.conditionActs(problem);
+    const place = this.pointOf(problem);
     const loop = place && loopLength(this.document!, place);
     const take = (at: LoopIndex) => (): void =>
       sendEdit(this, `taking out point ${at.index + 1}`, (draft) => removeVertex(draft, at));
     const show = (at: LoopIndex) => (): void => send(this, "corelag-select", { kind: "vertex", ...at });
-    return html`
-      ${
-        this.undoLabel === null
-          ? nothing
-          : html`<button class="act main" @click=${() => send(this, "corelag-do", { kind: "undo" })}>
-              ${putBackWords(this.undoLabel)}
-            </button>`
-      }
-      ${
-        place && loop && loop > FEWEST_VERTICES
-          ? html`<button class="act" @click=${take(place)}>Take point ${place.index + 1} out</button>`
-          : nothing
-      }
-      ${place ? html`<button class="act" @click=${show(place)}>Type point ${place.index + 1}</button>` : nothing}
-    `;
+    const selected = this.selection.kind === "vertex";
+    return html`${this.undoAct()}
+    ${
+      place && loop && loop > FEWEST_VERTICES
+        ? html`<button class="act" @click=${take(place)}>Take point ${place.index + 1} out</button>`
+        : nothing
+    }
+    ${place && !selected ? html`<button class="act" @click=${show(place)}>Type point ${place.index + 1}</button>` : nothing}`;
   }
+}
+
+/** The first exposed side that a stage says nothing about. */
+function sideWithout(document: CaseDocument, stage: number): LoopIndex | null {
+  for (const loop of readSheet(document).loops)
+    for (const side of loop.sides)
+      if (!side.onAxis && !side.joint && conditionOf(document.stages[stage], side.name) === undefined)
+        return { region: loop.region, loop: loop.loop, index: side.index };
+  return null;
 }
 
 function loopLength(document: CaseDocument, { region, loop }: LoopIndex): number | undefined {

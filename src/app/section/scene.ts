@@ -1,4 +1,6 @@
 /** The field of a result as the board shows it now: values at the cursor or arrivals, their range and their lines. */
+import { fromShown, toShown } from "../../case/units.ts";
+import type { UnitSystem } from "../../case/units.ts";
 import type { CaseResult, SectionMesh } from "../../run/result.ts";
 import { colourAt, shareOf, temperatureRange, wantsDarkInk } from "../colours.ts";
 import type { Range, Rgb } from "../colours.ts";
@@ -30,6 +32,8 @@ export interface SceneAsk {
   readonly shown: Shown;
   /** wanted step between lines; null: a round one */
   readonly step: number | null;
+  /** lines stand at round values of these units */
+  readonly units: UnitSystem;
   /** px per m, so that lines in a thin wall do not run together */
   readonly scale: number;
 }
@@ -58,6 +62,7 @@ export class SceneKeeper {
       old.result === ask.result &&
       old.step === ask.step &&
       sameShown(old.shown, ask.shown) &&
+      old.units === ask.units &&
       zoomGrain(old.scale) === zoomGrain(ask.scale) &&
       (ask.shown.by === "arrival" || old.cursor === ask.cursor);
     if (!same || !this.#scene) this.#scene = this.#make(ask);
@@ -65,15 +70,26 @@ export class SceneKeeper {
     return this.#scene;
   }
 
-  #make({ result, cursor, shown, step, scale }: SceneAsk): Scene {
+  #make({ result, cursor, shown, step, scale, units }: SceneAsk): Scene {
     const values =
       shown.by === "arrival" ? this.#arrival(result, shown.answer) : fieldAt(result.frames, cursor);
     const { low, high } = extremes(result.section, values);
     const range = shown.by === "arrival" ? rangeOf(low.value, high.value) : temperatureRange(result);
     const time = shown.by === "arrival";
     const least = (CLOSEST_LINES * steepness(result.section, values)) / scale;
-    const wanted = step ?? chooseStep(range.to - range.from, high.value - low.value, least, time);
-    const lines = levelLines(result.section, values, levelsBetween(low.value, high.value, wanted));
+    // K or s of one unit in which the lines are round
+    const unit = time ? 1 : fromShown(1, "temperatureDifference", units);
+    const chosen = chooseStep(
+      (range.to - range.from) / unit,
+      (high.value - low.value) / unit,
+      least / unit,
+      time,
+    );
+    const wanted = step ?? chosen * unit;
+    const levels = time
+      ? levelsBetween(low.value, high.value, wanted)
+      : roundTemperatures(low.value, high.value, wanted, units);
+    const lines = levelLines(result.section, values, levels);
     return { mesh: result.section, values, range, step: wanted, lines, low, high };
   }
 
@@ -95,6 +111,14 @@ const sameShown = (a: Shown, b: Shown): boolean =>
 
 const rangeOf = (from: number, to: number): Range =>
   to > from ? { from, to } : { from: from - 1, to: from + 1 };
+
+/** Temperatures [degC] between two others that are multiples of a step [K] in the shown unit. */
+function roundTemperatures(from: number, to: number, step: number, units: UnitSystem): number[] {
+  const [low, high] = [toShown(from, "temperature", units), toShown(to, "temperature", units)];
+  return levelsBetween(low, high, toShown(step, "temperatureDifference", units)).map((level) =>
+    fromShown(level, "temperature", units),
+  );
+}
 
 const zoomGrain = (scale: number): number => Math.round(ZOOM_GRAIN * Math.log2(scale));
 

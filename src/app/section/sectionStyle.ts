@@ -65,16 +65,17 @@ export const sectionStyle = css`
     right: var(--s-3);
     bottom: calc(var(--zrule) + var(--s-1));
   }
-  corelag-tag {
+  .cards {
     position: absolute;
     right: var(--s-3);
     top: 2px;
     width: var(--tag);
+    display: grid;
+    gap: var(--s-2);
+    max-height: calc(var(--tag-room, 420px) + 4px);
+    overflow: auto;
   }
-  corelag-mend {
-    position: absolute;
-    right: var(--s-3);
-    top: 2px;
+  .cards.mends {
     width: calc(var(--tag) + 26px);
   }
   .readout {
@@ -337,7 +338,8 @@ export const sectionStyle = css`
     }
   }
   @media (max-width: 760px) {
-    corelag-tag {
+    .cards,
+    .cards.mends {
       position: static;
       width: auto;
       margin: var(--s-2);

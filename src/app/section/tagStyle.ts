@@ -20,8 +20,6 @@ export const tagStyle = css`
     position: relative;
     background: var(--ground);
     padding: var(--s-2) var(--s-3) 10px 26px;
-    max-height: calc(var(--tag-room, 420px) - 6px);
-    overflow: auto;
     clip-path: polygon(8.6px 0, 100% 0, 100% 100%, 8.6px 100%, 0 calc(100% - 8.6px), 0 8.6px);
   }
   .body::before {
