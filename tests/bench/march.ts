@@ -112,13 +112,11 @@ function marchOnce(system: BenchSystem, { dt, steps, kind }: MarchBenchOptions):
   const analyzed = performance.now();
   const factor = solver.factor();
   const matrix = solver.matrix();
-  const rates = gatherValues(solver.inner.source, capacity, new Float64Array(capacity.length));
-  const values = gatherValues(solver.inner.source, conductance, new Float64Array(capacity.length));
-  for (let q = 0; q < rates.length; q++) {
-    rates[q]! /= dt;
-    values[q]! += rates[q]!;
-  }
-  matrix.refresh(rates);
+  const { source } = solver.inner;
+  const values = gatherValues(source, capacity, new Float64Array(capacity.length));
+  for (let q = 0; q < values.length; q++) values[q]! /= dt;
+  matrix.refresh(values);
+  for (let q = 0; q < values.length; q++) values[q]! += conductance[source[q]!]!;
   const gathered = performance.now();
   factor.refresh(values);
   const factored = performance.now();
