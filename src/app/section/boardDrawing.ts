@@ -14,7 +14,15 @@ import type { Scene } from "./scene.ts";
 import type { CorelagSection } from "./section.ts";
 import { readSheet } from "./sheet.ts";
 import type { Sheet } from "./sheet.ts";
-import { balloonsLayer, faultsLayer, pointsLayer, probesLayer, sizesLayer } from "./thingsLayer.ts";
+import {
+  balloonSize,
+  balloonsLayer,
+  faultsLayer,
+  placeBalloons,
+  pointsLayer,
+  probesLayer,
+  sizesLayer,
+} from "./thingsLayer.ts";
 import type { ThingsLayer } from "./thingsLayer.ts";
 import { placeOfSelection, threadPath } from "./thread.ts";
 
@@ -33,6 +41,9 @@ export class BoardDrawing {
   draw(document: CaseDocument, field: Scene | null, stops: readonly Rgb[]): SVGTemplateResult {
     const { section } = this;
     const { faults, sides } = faultsOf(section.problems, section.sheet);
+    const big = section.size.width > BIG_BOARD;
+    const answers = field ? (section.result?.answers ?? []) : [];
+    const balloons = placeBalloons(answers, section.view, big);
     const outline: OutlineLayer = {
       document,
       sheet: section.sheet,
@@ -44,22 +55,23 @@ export class BoardDrawing {
       stage: section.stageNow,
       faulty: sides,
       right: section.size.width - section.cardWidth,
+      balloons: balloons.map((balloon) => balloon.at),
+      balloonRadius: balloonSize(big).radius,
     };
     const things: ThingsLayer = {
       ...outline,
-      answers: field ? (section.result?.answers ?? []) : [],
       focusedAnswer: section.focusedAnswer,
       untagged: !section.tagged,
       arrivalOf: section.shown.by === "arrival" ? section.shown.answer : null,
       valueAt: (place) => (field ? this.#valueAt(field, place) : Number.NaN),
       inkAt: (place) => (field ? inkFor(stops, field.range, this.#valueAt(field, place)) : "var(--ink)"),
       faults,
-      big: section.size.width > BIG_BOARD,
+      big,
     };
     return svg`
-      ${this.#scales()}${field ? this.#lines(field, outline, stops, things.big) : nothing}
+      ${this.#scales()}${field ? this.#lines(field, outline, stops, big) : nothing}
       ${outlineUnder(outline)}${sizesLayer(things)}${sidesLayer(outline)}${probesLayer(things)}
-      ${balloonsLayer(things)}${threadPath(section, faults)}${pointsLayer(things)}${faultsLayer(things)}
+      ${balloonsLayer(things, balloons)}${threadPath(section, faults)}${pointsLayer(things)}${faultsLayer(things)}
     `;
   }
 

@@ -29,6 +29,9 @@ export interface OutlineLayer {
   readonly faulty: ReadonlySet<string>;
   /** right end of the free room [px] */
   readonly right: number;
+  /** where the balloons of the answers stand */
+  readonly balloons: readonly Spot[];
+  readonly balloonRadius: number;
 }
 
 export const sideKey = (loop: SheetLoop, side: SheetSide): string =>
@@ -118,9 +121,18 @@ function sideOf(layer: OutlineLayer, loop: SheetLoop, side: SheetSide): SVGTempl
   </g>`;
 }
 
-/** px between a side and the words beside it, and width of a letter */
+/** px between a side and the words beside it; width of a letter; height of the words */
 const NOTE_GAP = 12;
 const LETTER = 6.2;
+const NOTE_HEIGHT = 14;
+/** Shares of a side where its words may stand, the best first. */
+const NOTE_SHARES = [0.3, 0.16, 0.6, 0.8] as const;
+
+interface Note {
+  readonly x: number;
+  readonly y: number;
+  readonly anchor: "start" | "middle" | "end";
+}
 
 /** The words beside a side: shown while it is pointed at, focused or selected, or when it lacks a condition. */
 function noteAt(
@@ -130,21 +142,42 @@ function noteAt(
   words: string,
   lacks: boolean,
 ): SVGTemplateResult | typeof nothing {
-  const [a, b] = [alongSide(side, 0.3), alongSide(side, 0.34)].map((at) => toScreen(layer.view, ...at)) as [
-    Spot,
-    Spot,
-  ];
-  const length = Math.hypot(b[0] - a[0], b[1] - a[1]) || 1;
-  const way = [(b[0] - a[0]) / length, (b[1] - a[1]) / length] as const;
   const left = outsideIsLeft(
     loop.vertices.map((vertex) => toScreen(layer.view, ...vertex.at)),
     loop.loop > 0,
   );
-  const out = left ? [way[1], -way[0]] : [-way[1], way[0]];
-  const flat = Math.abs(out[1]!) > 0.6;
-  const anchor = flat ? "middle" : out[0]! > 0 ? "start" : "end";
-  const reach = words.length * LETTER * (anchor === "middle" ? 0.5 : anchor === "start" ? 1 : 0);
-  if (a[0] + reach > layer.right) return nothing;
-  const y = a[1] + out[1]! * NOTE_GAP + (out[1]! > 0.6 ? 10 : flat ? 0 : 4);
-  return svg`<text class="note ${lacks ? "lack" : ""}" x=${a[0] + out[0]! * NOTE_GAP} y=${y} text-anchor=${anchor}>${words}</text>`;
+  const note = NOTE_SHARES.map((share) => besideSide(layer.view, side, share, left)).find((spot) =>
+    fits(layer, spot, words),
+  );
+  if (!note) return nothing;
+  return svg`<text class="note ${lacks ? "lack" : ""}" x=${note.x} y=${note.y} text-anchor=${note.anchor}>${words}</text>`;
+}
+
+function besideSide(view: View, side: SheetSide, share: number, left: boolean): Note {
+  const [a, b] = [alongSide(side, share), alongSide(side, share + 0.04)].map((at) =>
+    toScreen(view, ...at),
+  ) as [Spot, Spot];
+  const length = Math.hypot(b[0] - a[0], b[1] - a[1]) || 1;
+  const [along, down] = [(b[0] - a[0]) / length, (b[1] - a[1]) / length];
+  const out: Spot = left ? [down, -along] : [-down, along];
+  const flat = Math.abs(out[1]) > 0.6;
+  const drop = out[1] > 0.6 ? 10 : flat ? 0 : 4;
+  return {
+    x: a[0] + out[0] * NOTE_GAP,
+    y: a[1] + out[1] * NOTE_GAP + drop,
+    anchor: flat ? "middle" : out[0] > 0 ? "start" : "end",
+  };
+}
+
+/** Whether the words stay in the free room and clear of the balloons. */
+function fits(layer: OutlineLayer, { x, y, anchor }: Note, words: string): boolean {
+  const width = words.length * LETTER;
+  const from = x - (anchor === "middle" ? width / 2 : anchor === "end" ? width : 0);
+  const clear = layer.balloons.every(
+    ([bx, by]) =>
+      bx + layer.balloonRadius < from ||
+      bx - layer.balloonRadius > from + width ||
+      Math.abs(by - y + NOTE_HEIGHT / 2) > layer.balloonRadius + NOTE_HEIGHT / 2,
+  );
+  return from + width < layer.right && clear;
 }

@@ -23,7 +23,6 @@ export interface ThingsLayer {
   readonly bounds: Bounds;
   readonly units: UnitSystem;
   readonly selection: Selection;
-  readonly answers: readonly Answer[];
   readonly focusedAnswer: number | null;
   /** answer whose arrival colours the section; null for none */
   readonly arrivalOf: number | null;
@@ -103,40 +102,47 @@ export function probesLayer(layer: ThingsLayer): SVGTemplateResult[] {
   });
 }
 
-/** Balloons at the places that decide the answers; several near one place stand side by side, over all stems. */
-export function balloonsLayer(layer: ThingsLayer): SVGTemplateResult {
-  const radius = layer.big ? 10 : 8.5;
-  const rise = layer.big ? 30 : 22;
-  const taken: Spot[] = [];
-  const balloons = layer.answers.flatMap((answer, index) => {
-    if (answer.place === null) return [];
-    const [x, y] = toScreen(layer.view, ...answer.place);
-    let at: Spot = [x, y - rise];
-    while (taken.some(([tx, ty]) => Math.hypot(tx - at[0], ty - at[1]) < 2 * radius + 3))
+/** px: radius of a balloon, and how far it stands above its place */
+export const balloonSize = (big: boolean): { radius: number; rise: number } =>
+  big ? { radius: 10, rise: 30 } : { radius: 8.5, rise: 22 };
+
+/** A balloon of an answer: its foot at the place that decides, its middle above it. */
+export interface Balloon {
+  /** number of the answer, from 0 */
+  readonly index: number;
+  readonly place: Place;
+  readonly foot: Spot;
+  readonly at: Spot;
+}
+
+/** Balloons at the places that decide the answers; several near one place stand side by side. */
+export function placeBalloons(answers: readonly Answer[], view: View, big: boolean): Balloon[] {
+  const { radius, rise } = balloonSize(big);
+  const placed: Balloon[] = [];
+  answers.forEach(({ place }, index) => {
+    if (place === null) return;
+    const foot = toScreen(view, ...place);
+    let at: Spot = [foot[0], foot[1] - rise];
+    while (placed.some((other) => Math.hypot(other.at[0] - at[0], other.at[1] - at[1]) < 2 * radius + 3))
       at = [at[0] + 2 * radius + 4, at[1]];
-    taken.push(at);
-    return [
-      {
-        index,
-        foot: [x, y] as Spot,
-        at,
-        ink: layer.inkAt(answer.place),
-        lit: layer.focusedAnswer === index || layer.arrivalOf === index ? "lit" : "",
-      },
-    ];
+    placed.push({ index, place, foot, at });
   });
+  return placed;
+}
+
+export function balloonsLayer(layer: ThingsLayer, balloons: readonly Balloon[]): SVGTemplateResult {
+  const { radius } = balloonSize(layer.big);
+  const lit = (index: number): string =>
+    layer.focusedAnswer === index || layer.arrivalOf === index ? "lit" : "";
   return svg`<g class="balloons" aria-hidden="true">
+    ${balloons.map(({ place, foot: [x, y], at }) => {
+      const ink = layer.inkAt(place);
+      return svg`<path d="M${x} ${y}L${at[0]} ${at[1]}" stroke=${ink} stroke-width="1.25"></path>
+        <circle cx=${x} cy=${y} r="2.75" fill=${ink}></circle>`;
+    })}
     ${balloons.map(
-      ({
-        foot: [x, y],
-        at,
-        ink,
-      }) => svg`<path d="M${x} ${y}L${at[0]} ${at[1]}" stroke=${ink} stroke-width="1.25"></path>
-        <circle cx=${x} cy=${y} r="2.75" fill=${ink}></circle>`,
-    )}
-    ${balloons.map(
-      ({ index, at, lit }) => svg`<circle class="ball ${lit}" cx=${at[0]} cy=${at[1]} r=${radius}></circle>
-        <text class="ball-n ${lit}" x=${at[0]} y=${at[1] + 4.3}>${index + 1}</text>`,
+      ({ index, at }) => svg`<circle class="ball ${lit(index)}" cx=${at[0]} cy=${at[1]} r=${radius}></circle>
+        <text class="ball-n ${lit(index)}" x=${at[0]} y=${at[1] + 4.3}>${index + 1}</text>`,
     )}
   </g>`;
 }
