@@ -95,8 +95,11 @@ export const ROW_SIZE_DROP = 0.6;
 export const ROW_POINT_GAP = 0.35;
 /** The true arc may lie off its chord by this share of the first row. */
 export const ROW_SAGITTA_SHARE = 0.2;
-/** Rows take this share of the nodes at most; beyond, all of them are made thicker. */
-export const ROW_NODES_SHARE = 0.5;
+/**
+ * Rows take this share of the nodes at most; beyond, all of them are made thicker. Less leaves a bottle's wall
+ * without them, more takes nodes from the inside that late answers need.
+ */
+export const ROW_NODES_SHARE = 0.65;
 /** Columns that lean at a corner stand upright again after so many depths of the rows. */
 export const ROW_LEAN_DEPTHS = 3;
 

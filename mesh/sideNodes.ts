@@ -63,7 +63,15 @@ export function placeSideNodes(
     piecesNodes: [] as number[][],
     piecesShares: [] as number[][],
   };
-  const firstStep = Float64Array.from(outline.x, (x, v) => tree.sizeAt(x, outline.y[v]!));
+  const mostLength = outline.pieces.map(({ arc }, k) =>
+    arc ? arc.radius * (rows?.mostTurn[k] ?? ARC_MOST) : Infinity,
+  );
+  const firstStep = outline.x.map((x, v) =>
+    outline.ends[v]!.reduce(
+      (least, k) => Math.min(least, 0.99 * mostLength[k]!),
+      tree.sizeAt(x, outline.y[v]!),
+    ),
+  );
   outline.pieces.forEach((piece, k) => {
     const stops = [
       ...shells(piece, tree, from.sharpest[piece.a]!, firstStep[piece.a]!, false),

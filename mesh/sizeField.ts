@@ -8,11 +8,15 @@
 import type { SideRows } from "./types.ts";
 
 /**
- * First row in diffusion lengths. Trials on spheres and cylinders (six-node triangles, Biot numbers 1 to 50, own
- * measurements): 1 to 2 is best from the first instant on, growth 1.5 to 3 nearly equal.
+ * First row in diffusion lengths: 1 to 2 was best from the first instant on in trials on spheres and cylinders with
+ * six-node triangles, Biot numbers 1 to 50.
  */
 const FIRST_ROW_LENGTHS = 1.5;
-const ROW_GROWTH = 2;
+/**
+ * On a stepped shaft and a bottle wall growth 1.5 came two to four times closer than 2 some time after the first
+ * instant, at equal numbers of nodes.
+ */
+const ROW_GROWTH = 1.5;
 /** Below this Biot number the field bends so little across the layer that rows gain nothing. */
 const LEAST_BIOT = 0.1;
 /** A layer deeper than this share of the half thickness (Fourier number 0.06) is no layer any more. */

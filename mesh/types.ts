@@ -23,7 +23,7 @@ export interface OutlineRegion {
  * `side` counts the sides of all regions in order: region, loop, side.
  *
  * Rows are added while they are thinner than the triangles beside them. Where sides with rows meet, the finer of
- * their schedules holds for both. Rows that would take more than half of the nodes are all made thicker.
+ * their schedules holds for both. Rows that would take more than two thirds of the nodes are all made thicker.
  */
 export interface SideRows {
   readonly side: number;

@@ -2,6 +2,7 @@ import { describe, expect, it } from "vitest";
 import { checkMesh } from "../../mesh/checkMesh.ts";
 import { meshRegions } from "../../mesh/meshRegions.ts";
 import { meshQuality } from "../../mesh/quality.ts";
+import { refineMesh } from "../../mesh/refineMesh.ts";
 import { firstRow } from "../../mesh/sizeField.ts";
 import type { MeshRequest, TriangleMesh } from "../../mesh/types.ts";
 import { meshFigures } from "../helpers/meshFigures.ts";
@@ -137,6 +138,8 @@ describe("rows parallel to sides", () => {
         const asked = { regions, nodes: 3000, rows: rowsEverywhere(regions, share * sizeOf(regions)) };
         const meshed = meshRegions(asked);
         expect(checkMesh(meshed, asked)).toEqual([]);
+        // Side nodes go to the true arc when refined: thin rows beside arcs must bear it.
+        expect(checkMesh(refineMesh(meshed), asked)).toEqual([]);
         expect(meshQuality(meshed).maxAngleDeg).toBeLessThanOrEqual(130);
       }
     });
@@ -162,10 +165,10 @@ describe("rows parallel to sides", () => {
 describe("first row from the numbers of a case", () => {
   const steel = { diffusivity: 1e-5, conductivity: 40, halfThickness: 0.1, film: 1000, instant: 1 };
 
-  it("is one and a half diffusion lengths, growing by two", () => {
+  it("is one and a half diffusion lengths, growing by a half", () => {
     const row = firstRow(steel)!;
     expect(row.thickness).toBeCloseTo(1.5 * Math.sqrt(1e-5), 12);
-    expect(row.growth).toBe(2);
+    expect(row.growth).toBe(1.5);
   });
 
   it("grows with the square root of the first instant", () => {
