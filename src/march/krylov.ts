@@ -13,7 +13,7 @@ import { toInner } from "../linalg/numbering.ts";
 import { FIRST_INSTANT_SHARE, KRYLOV } from "./defaults.ts";
 import { setHeld } from "./innerSystem.ts";
 import type { KrylovAnswer, KrylovBasis } from "./krylovBasis.ts";
-import { KrylovHistory, type KrylovSpan } from "./krylovHistory.ts";
+import { KrylovHistory, type InstantError, type KrylovSpan } from "./krylovHistory.ts";
 import { drivenVectors, type DrivenVector } from "./krylovLoads.ts";
 import type { KrylovLayer, KrylovSystem } from "./krylovSystem.ts";
 import type { MarchOptions, MarchProgress, Scheme } from "./types.ts";
@@ -37,7 +37,7 @@ export const krylov: Scheme = function* (system, start, options) {
     yield* march.run();
     workspace.counts.solves += march.solves;
     const historyUntil = (times: Float64Array) =>
-      new KrylovHistory(kept.solver.numbering, inner.held, from, march.spans, times, {
+      new KrylovHistory(kept.solver.numbering, inner.held, from, march.spans, times, march.instantErrors(), {
         scheme: "krylov",
         steps: march.vectors,
         rejectedSteps: 0,
@@ -75,6 +75,7 @@ interface Growing {
 
 class KrylovMarch {
   readonly spans: KrylovSpan[] = [];
+  private readonly errors: InstantError[] = [];
   solves = 0;
   vectors = 0;
   linearIterations = 0;
@@ -100,6 +101,11 @@ class KrylovMarch {
   instants(): Float64Array {
     const checked = this.checkInstants(this.options.duration);
     return Float64Array.of(0, ...checked.filter((time) => time >= this.firstInstant));
+  }
+
+  /** The estimates of all spans, ascending in time. */
+  instantErrors(): InstantError[] {
+    return this.errors.sort((a, b) => a.time - b.time);
   }
 
   /** One span that ends at `to`; @returns where it begins: 0, or the instant from which on it is good enough */
@@ -177,8 +183,9 @@ class KrylovMarch {
   ): number {
     this.spans.push({ from, to, answers: growing.map(({ answer }) => answer) });
     estimates.forEach((estimate, i) => {
-      if (instants[i]! >= Math.max(from, this.firstInstant))
-        this.timeError = Math.max(this.timeError, estimate);
+      if (instants[i]! < Math.max(from, this.firstInstant)) return;
+      this.timeError = Math.max(this.timeError, estimate);
+      this.errors.push({ time: instants[i]!, error: estimate });
     });
     for (const { basis } of growing) {
       const { solves, linearIterations } = basis.takeWork();

@@ -12,12 +12,19 @@ export interface KrylovSpan {
   readonly answers: readonly KrylovAnswer[];
 }
 
+/** What the error was estimated to be at an instant. */
+export interface InstantError {
+  readonly time: number;
+  readonly error: number;
+}
+
 export class KrylovHistory implements StageHistory {
   private readonly inner: Float64Array;
 
   /**
    * @param start  inner numbers, held unknowns at their held values of time 0
    * @param spans  from the latest to the earliest, together 0 to the duration
+   * @param errors ascending in time
    */
   constructor(
     private readonly numbering: Numbering,
@@ -25,6 +32,7 @@ export class KrylovHistory implements StageHistory {
     private readonly start: Float64Array,
     private readonly spans: readonly KrylovSpan[],
     readonly times: Float64Array,
+    private readonly errors: readonly InstantError[],
     readonly facts: MarchFacts,
   ) {
     this.inner = new Float64Array(start.length);
@@ -51,6 +59,14 @@ export class KrylovHistory implements StageHistory {
 
   signalIntegral(signal: Signal, time: number): number {
     return signalIntegral(signal, time);
+  }
+
+  /** The larger of the estimates on either side; before the first of them nothing better than the largest is known. */
+  errorAt(time: number): number {
+    const after = this.errors.findIndex((each) => each.time >= time);
+    if (after === 0) return this.facts.timeError;
+    if (after < 0) return this.errors.at(-1)?.error ?? this.facts.timeError;
+    return Math.max(this.errors[after - 1]!.error, this.errors[after]!.error);
   }
 
   private spanAt(time: number): KrylovSpan {

@@ -55,6 +55,11 @@ export interface StageHistory {
   integral(time: number, out: Float64Array): Float64Array;
   /** integral of a signal over [0, time] in the same sense */
   signalIntegral(signal: Signal, time: number): number;
+  /**
+   * Estimate of the error in time at one instant, where the scheme can tell it apart from the largest of all instants
+   * (facts.timeError); absent where it cannot.
+   */
+  errorAt?(time: number): number;
   readonly facts: MarchFacts;
 }
 

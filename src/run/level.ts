@@ -35,7 +35,7 @@ export interface Level {
 }
 
 /** Shares of the run at which soundings are taken: from its first twentieth on. */
-const SOUNDING_SHARES = [0.05, 0.1, 0.2, 0.4, 0.7, 1];
+export const SOUNDING_SHARES = [0.05, 0.1, 0.2, 0.4, 0.7, 1];
 
 /** Solves the case on one mesh. null when the host ended the run before anything was reached. */
 export async function solveLevel(

@@ -1,5 +1,6 @@
 /** Is a list of nested levels good enough? Stated uncertainties, and what is still asked of the mesh. */
 import type { ElementOrder } from "../fem/elementMesh.ts";
+import { SOUNDING_SHARES } from "./level.ts";
 import type { Level } from "./level.ts";
 import type { FieldAnswer } from "./questions.ts";
 import { pooledChange, spatialUncertainty } from "./uncertainty.ts";
@@ -15,23 +16,55 @@ export interface StatedUncertainty {
 export const timeErrorOf = (level: Level): number =>
   Math.max(...level.timeline.stages.map((stage) => stage.history.facts.timeError));
 
+/**
+ * Error in time at an instant of the case [K]: what the march of its stage tells there, and what the stages before it
+ * ended with. null: no instant in particular, so the largest of all.
+ */
+function timeErrorAt(level: Level, time: number | null): number {
+  if (time === null) return timeErrorOf(level);
+  let error = 0;
+  for (const { began, ended, history } of level.timeline.stages) {
+    const local = Math.min(time, ended) - began;
+    error += history.errorAt?.(local) ?? history.facts.timeError;
+    if (time <= ended) break;
+  }
+  return error;
+}
+
 /** Uncertainty of every answer and of the field, space and time together. */
 export function statedUncertainty(levels: readonly Level[], element: ElementOrder): StatedUncertainty {
   const last = levels.at(-1)!;
-  const inTime = timeErrorOf(last);
   const lists = last.answers.map((_, i) => levels.map((level) => level.answers[i]!.value));
-  const pools = new Map<string, number>();
-  for (const unit of new Set(last.answers.map((answer) => answer.unit)))
-    pools.set(unit, pooledChange(lists.filter((_, i) => last.answers[i]!.unit === unit)));
   const answers = last.answers.map((answer, i) => {
-    const inSpace = spatialUncertainty(lists[i]!, pools.get(answer.unit)!, element);
-    return inSpace === null ? null : inSpace + timeShare(answer, inTime);
+    const inSpace = spatialUncertainty(lists[i]!, poolOf(answer, last.answers, lists), element);
+    return inSpace === null ? null : inSpace + timeShare(answer, timeErrorAt(last, answer.at));
   });
   const soundings = last.soundings.map((_, i) => levels.map((level) => level.soundings[i]!));
   const pool = pooledChange(soundings);
   const stated = soundings.map((values) => spatialUncertainty(values, pool, element));
+  const inTime = Math.max(...SOUNDING_SHARES.map((share) => timeErrorAt(last, share * last.timeline.ended)));
   const temperature = stated.includes(null) ? null : Math.max(...(stated as number[])) + inTime;
   return { answers, temperature };
+}
+
+/** Answers that fall within this factor in time are pooled. */
+const SAME_INSTANT = 1.5;
+
+/**
+ * Root mean square of the last change over answers of one kind: times with times, temperatures with those of about the
+ * same instant, since a field settles from late to early.
+ */
+function poolOf(
+  answer: FieldAnswer,
+  answers: readonly FieldAnswer[],
+  lists: readonly (readonly (number | null)[])[],
+): number {
+  const near = ({ unit, at }: FieldAnswer): boolean => {
+    if (unit !== answer.unit) return false;
+    if (unit === "s" || at === null || answer.at === null || at === answer.at) return true;
+    return Math.max(at, answer.at) <= SAME_INSTANT * Math.min(at, answer.at);
+  };
+  return pooledChange(lists.filter((_, i) => near(answers[i]!)));
 }
 
 /** The error in time [K] carried into the unit of an answer. */
