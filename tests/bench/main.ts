@@ -1,11 +1,13 @@
 /**
  * npm run bench: one JSON line per benchmark, or the whole table.
  *
- *   bench mesh CASE.json --nodes N      bench solve CASE.json --nodes N      bench march DIR --dt S --steps N
+ *   bench mesh CASE.json --nodes N      bench solve CASE.json --nodes N
+ *   bench march DIR --dt S --steps N    bench schemes DIR        (DIR as "corelag system" writes it)
  */
 import { parseArgs } from "node:util";
 import { benchMesh, benchSolve } from "./caseBench.ts";
 import { benchMarch } from "./march.ts";
+import { benchSchemes } from "./schemes.ts";
 
 const { positionals, values } = parseArgs({
   allowPositionals: true,
@@ -42,9 +44,10 @@ else if (what === "mesh" && target) print(await benchMesh(target, number("nodes"
 else if (what === "solve" && target) print(await benchSolve(target, number("nodes")));
 else if (what === "march" && target)
   print(await benchMarch(target, { dt: number("dt"), steps: number("steps") }));
+else if (what === "schemes" && target) for (const record of benchSchemes(target)) print(record);
 else {
   process.stderr.write(
-    "bench [mesh CASE.json --nodes N | solve CASE.json --nodes N | march DIR --dt S --steps N]\n",
+    "bench [mesh CASE.json --nodes N | solve CASE.json --nodes N | march DIR --dt S --steps N | schemes DIR]\n",
   );
   process.exitCode = 2;
 }
