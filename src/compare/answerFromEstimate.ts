@@ -23,7 +23,8 @@ import {
   slopeOfCurve,
   timeReached,
 } from "./estimateCurve.ts";
-import type { EstimateCurve, Going, StageWindow } from "./estimateCurve.ts";
+import type { Going } from "../heat/crossings.ts";
+import type { EstimateCurve, StageWindow } from "./estimateCurve.ts";
 import type { LumpedEstimate, SeriesEstimate } from "./types.ts";
 
 /** Curves of an estimate by place [degC] over one time [s]. */

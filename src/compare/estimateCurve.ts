@@ -1,13 +1,14 @@
 /** A curve of an estimate, read between its instants by cubics that keep their sense, stage by stage. */
 
+import { firstReached as firstOf, timeReached as totalOf } from "../heat/crossings.ts";
+import type { Going, SampledCurve } from "../heat/crossings.ts";
+
 /** One stage on the time of the case [s]. */
 export interface StageWindow {
   readonly name: string;
   readonly began: number;
   readonly ended: number;
 }
-
-export type Going = "up" | "down";
 
 export interface EstimateCurve {
   readonly time: Float64Array;
@@ -80,32 +81,20 @@ export function slopeOfCurve(curve: EstimateCurve, time: number): number {
   );
 }
 
+/** The curve as the search for levels takes it. */
+const sampled = (curve: EstimateCurve): SampledCurve => ({
+  times: curve.time,
+  values: curve.values,
+  at: (time) => readCurve(curve, time),
+});
+
 /** First instant not before `from` at which the level is reached; null when it never is. */
-export function firstReached(curve: EstimateCurve, level: number, going: Going, from = 0): number | null {
-  const there = (value: number) => (going === "down" ? value <= level : value >= level);
-  if (there(readCurve(curve, from))) return from;
-  let low = from;
-  for (const [i, time] of curve.time.entries()) {
-    if (time <= from) continue;
-    if (there(curve.values[i]!)) return passing(curve, there, low, time);
-    low = time;
-  }
-  return null;
-}
+export const firstReached = (curve: EstimateCurve, level: number, going: Going, from = 0): number | null =>
+  firstOf(sampled(curve), level, going, from);
 
 /** Seconds spent at or beyond the level. */
-export function timeReached(curve: EstimateCurve, level: number, going: Going): number {
-  const there = (value: number) => (going === "down" ? value <= level : value >= level);
-  let total = 0;
-  for (let i = 1; i < curve.time.length; i++) {
-    const [from, to] = [curve.time[i - 1]!, curve.time[i]!];
-    const [a, b] = [there(curve.values[i - 1]!), there(curve.values[i]!)];
-    if (a && b) total += to - from;
-    if (!a && b) total += to - passing(curve, there, from, to);
-    if (a && !b) total += passing(curve, (value) => !there(value), from, to) - from;
-  }
-  return total;
-}
+export const timeReached = (curve: EstimateCurve, level: number, going: Going): number =>
+  totalOf(sampled(curve), level, going);
 
 /** Integral of a function of the temperature over the whole run, by Simpson's rule between instants. */
 export function integrateOver(curve: EstimateCurve, f: (temperature: number) => number): number {
@@ -116,20 +105,6 @@ export function integrateOver(curve: EstimateCurve, f: (temperature: number) => 
     total += ((to - from) * (f(curve.values[i - 1]!) + 4 * middle + f(curve.values[i]!))) / 6;
   }
   return total;
-}
-
-const HALVINGS = 60;
-
-/** By halving: between two instants the cubic runs one way, so there is one passing. */
-function passing(curve: EstimateCurve, there: (value: number) => boolean, from: number, to: number): number {
-  let [low, high] = [from, to];
-  for (let i = 0; i < HALVINGS && high > low; i++) {
-    const middle = (low + high) / 2;
-    if (middle === low || middle === high) break;
-    if (there(readCurve(curve, middle))) high = middle;
-    else low = middle;
-  }
-  return high;
 }
 
 /** i with time[i] <= t < time[i + 1], the first or last interval beyond the ends. */

@@ -28,9 +28,6 @@ export const EARLIEST_SHARE = 1e-4;
 /** Fields kept for looking at, over the whole case. */
 export const FRAME_COUNT = 121;
 
-/** Relative width to which the instant of an event is narrowed: far below any stated uncertainty. */
-export const EVENT_WIDTH = 1e-10;
-
 /** Factors of the stated uncertainty, from the coverage study described in DEVELOPERS.md [accuracy]. */
 export const UNCERTAINTY = {
   /** two meshes only: share of the change, and least share of the pooled change */

@@ -5,7 +5,8 @@ import type { MarchProgress, SchemeName, Signal, StageHistory } from "../march/t
 import type { NamedSide } from "./conditions.ts";
 import { Cancelled, pause } from "./context.ts";
 import type { RunContext } from "./context.ts";
-import { firstReached, reached } from "./crossings.ts";
+import { firstReached, reached } from "../heat/crossings.ts";
+import type { Going } from "../heat/crossings.ts";
 import { FIRST_INSTANT_SHARE } from "./defaults.ts";
 import type { KeptWork } from "./kept.ts";
 import { keptInstants } from "./instants.ts";
@@ -14,7 +15,7 @@ import type { PartSystem } from "./partSystem.ts";
 import type { StageSystem } from "./stageSystem.ts";
 import type { StageRun, Timeline } from "./timeline.ts";
 import { trackFor } from "./tracks.ts";
-import type { Going, Tracks } from "./tracks.ts";
+import type { Tracks } from "./tracks.ts";
 
 export interface MarchSettings {
   readonly scheme: SchemeName | undefined;

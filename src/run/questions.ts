@@ -1,7 +1,7 @@
 /** The questions of a case, answered from its run: exact instants are sought on the dense field, not between samples. */
 import type { Question } from "../case/types.ts";
-import { firstReached, timeReached } from "./crossings.ts";
-import type { SampledCurve } from "./crossings.ts";
+import { firstReached, timeReached } from "../heat/crossings.ts";
+import type { Going, SampledCurve } from "../heat/crossings.ts";
 import { goingFrom } from "./marchStages.ts";
 import { heatWeights } from "./ledger.ts";
 import type { Answer, History } from "./result.ts";
@@ -9,7 +9,7 @@ import type { PartSystem } from "./partSystem.ts";
 import { fieldAt } from "./timeline.ts";
 import type { Timeline } from "./timeline.ts";
 import { dot, trackFor } from "./tracks.ts";
-import type { Going, Track, Tracks } from "./tracks.ts";
+import type { Track, Tracks } from "./tracks.ts";
 
 /** What the field alone says: the answer before estimates and uncertainty are laid beside it. */
 export interface FieldAnswer {

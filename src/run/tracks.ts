@@ -4,6 +4,7 @@
  */
 import { extremeOf } from "../fem/extremes.ts";
 import type { Extreme } from "../fem/extremes.ts";
+import type { Going } from "../heat/crossings.ts";
 import type { PartSystem } from "./partSystem.ts";
 
 export interface Track {
@@ -13,8 +14,6 @@ export interface Track {
   /** where that temperature is; null for means */
   placeOf(field: Float64Array): readonly [number, number] | null;
 }
-
-export type Going = "up" | "down";
 
 export interface Tracks {
   readonly coldest: Track;

@@ -1,6 +1,9 @@
 /** When a curve that can be asked at any instant passes a level. */
-import { EVENT_WIDTH } from "./defaults.ts";
-import type { Going } from "./tracks.ts";
+
+export type Going = "up" | "down";
+
+/** Relative width to which the instant of an event is narrowed: far below any stated uncertainty. */
+const EVENT_WIDTH = 1e-10;
 
 export interface SampledCurve {
   /** instants, ascending, and the values there */
@@ -18,19 +21,15 @@ export const reached = (value: number, level: number, going: Going): boolean =>
  * First instant not before `from` at which the curve has reached the level; null when it never does. Passings between
  * two samples that leave both samples on the same side are not seen: sample finely enough.
  */
-export function firstReached(
-  curve: SampledCurve,
-  level: number,
-  going: Going,
-  from = -Infinity,
-): number | null {
-  let before = -1;
-  for (let i = 0; i < curve.times.length; i++) {
-    const time = curve.times[i]!;
-    if (time < from) continue;
-    if (reached(curve.values[i]!, level, going))
-      return before < 0 ? Math.max(time, from) : passing(curve, level, curve.times[before]!, time);
-    before = i;
+export function firstReached(curve: SampledCurve, level: number, going: Going, from?: number): number | null {
+  const { times, values } = curve;
+  let before = from ?? times[0]!;
+  if (reached(curve.at(before), level, going)) return before;
+  for (let i = 0; i < times.length; i++) {
+    const time = times[i]!;
+    if (time <= before) continue;
+    if (reached(values[i]!, level, going)) return passing(curve, level, before, time);
+    before = time;
   }
   return null;
 }
