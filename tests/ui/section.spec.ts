@@ -216,6 +216,28 @@ test("an outline that crosses itself is marked at its place, answers stay, and t
   await settle(page);
 });
 
+test("a side without a condition says so on the sheet, and one is picked for it there", async ({ page }) => {
+  await page.evaluate(() => {
+    interface Editing {
+      edit(label: string, recipe: (draft: { stages: { sides: object }[] }) => void): void;
+    }
+    (appState() as unknown as Editing).edit("taking the film off", (draft) => {
+      draft.stages[0]!.sides = { foot: "insulated", wall: { film: 900 } };
+    });
+  });
+  const card = page.getByRole("alert", { name: "Fault" });
+  await expect(card).toContainText("A side needs a condition");
+  await expect(page.getByRole("button", { name: "Head, side 3, needs a condition" })).toBeVisible();
+  await card.getByRole("button", { name: "Pick one for it" }).click();
+  await page
+    .getByRole("complementary", { name: "Selected" })
+    .getByRole("button", { name: "Insulate" })
+    .click();
+  await expect(card).toBeHidden();
+  await settle(page);
+  expect((await documentOf(page)).stages[0]!.sides["head"]).toBe("insulated");
+});
+
 test("lying and standing, zoom by the wheel, fit", async ({ page }) => {
   await page.getByRole("button", { name: "Lie down" }).click();
   await expect(page.getByRole("group", { name: /upper half editable/ })).toBeVisible();

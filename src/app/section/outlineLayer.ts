@@ -94,8 +94,12 @@ export function sidesLayer(layer: OutlineLayer): SVGTemplateResult[] {
   );
 }
 
+/** px: a level or upright side has no width of its own; this gives it one for touch and for listeners */
+const EXTENT = 16;
+
 function sideOf(layer: OutlineLayer, loop: SheetLoop, side: SheetSide): SVGTemplateResult {
   const d = pathOf(side.points, layer.view, toScreen);
+  const middle = toScreen(layer.view, ...alongSide(side, 0.5));
   const { region, loop: number } = loop;
   const selected = sameSelection(layer.selection, { kind: "side", region, loop: number, index: side.index });
   const found = conditionOf(layer.document.stages[layer.stage], side.name);
@@ -116,6 +120,7 @@ function sideOf(layer: OutlineLayer, loop: SheetLoop, side: SheetSide): SVGTempl
     class="side ${state}" role="button" tabindex="0" data-grip="side" data-region=${region} data-loop=${number} data-index=${side.index}
     aria-label="${sideName(side)}, ${words}" aria-pressed=${selected}
   >
+    <rect class="extent" x=${middle[0] - EXTENT / 2} y=${middle[1] - EXTENT / 2} width=${EXTENT} height=${EXTENT}></rect>
     <path class="hit" d=${d}></path><path class="line" d=${d}></path>
     ${noteAt(layer, loop, side, `${side.name}: ${words}`, lacks)}
   </g>`;

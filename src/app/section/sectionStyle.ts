@@ -136,6 +136,11 @@ export const sectionStyle = css`
     cursor: pointer;
     outline: none;
   }
+  .extent {
+    fill: none;
+    stroke: none;
+    pointer-events: none;
+  }
   .side:hover .line,
   .side:focus-visible .line,
   .side.on .line {
