@@ -117,7 +117,7 @@ function runsAhead(question: Question, { value, slope }: FieldReading, estimate:
 /** The difference as a temperature at the field's instant, and as a time at the field's temperature. */
 function inOtherUnits(
   question: Question,
-  { slope, value }: FieldReading,
+  { slope, at }: FieldReading,
   difference: number,
   estimateTemperature: number | null,
 ): { kelvin: number | null; seconds: number | null } {
@@ -129,7 +129,7 @@ function inOtherUnits(
       };
     case "reading":
       // ahead in temperature is early in time
-      return { kelvin: difference, seconds: slope === 0 || value === null ? null : -difference / slope };
+      return { kelvin: difference, seconds: asTime(difference, slope, at) };
     case "spread":
       return { kelvin: difference, seconds: null };
     case "passage":
@@ -141,4 +141,14 @@ function inOtherUnits(
     case "heat":
       return { kelvin: null, seconds: null };
   }
+}
+
+/**
+ * A difference of readings as a time, by the slope there. None where the part hardly moves: a time longer than the part
+ * has been under way says nothing.
+ */
+function asTime(kelvin: number, slope: number, at: number | null): number | null {
+  if (slope === 0 || at === null) return null;
+  const seconds = -kelvin / slope;
+  return Math.abs(seconds) <= at ? seconds : null;
 }

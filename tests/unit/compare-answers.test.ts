@@ -173,7 +173,12 @@ describe("comparison", () => {
     expect(side(reading, 100, 120, 0.1)).toBe("unsafe");
     expect(side(reading, 100, 120, 0)).toBe("unsafe");
     // 20 K colder on a curve that falls by 0.1 K/s: 200 s early
-    expect(compareAnswer(reading, field(100), 80, null, 500)).toMatchObject({ kelvin: -20, seconds: -200 });
+    const late = { ...field(100), at: 1000 };
+    expect(compareAnswer(reading, late, 80, null, 500)).toMatchObject({ kelvin: -20, seconds: -200 });
+  });
+  test("reading: where the part hardly moves, a difference is no time (6.6 K were once told as 7 h early)", () => {
+    const still = { ...field(850, -2.4e-4), at: 0.5 };
+    expect(compareAnswer(reading, still, 843.4, null, 790)).toMatchObject({ seconds: null });
   });
   test("spread, passage, rate, time at temperature, dose and heat", () => {
     expect(side({ ask: "spread" }, 90, 0)).toBe("unsafe");
