@@ -49,6 +49,7 @@ export async function benchSolve(file: string, nodes: number): Promise<Record<st
   const { profile, input } = soundCase(file);
   const text = readFileSync(file, "utf8");
   const total = await timeRounds(() => solveCase(text, LIBRARY, { nodes }, context));
+  const moved = await benchMovedAmbient(text, nodes);
   const request = { regions: profile.regions, points: input.probes.map((probe) => probe.at) };
   const parts = { mesh: [] as number[], assemble: [] as number[], march: [] as number[] };
   let unknowns = 0;
@@ -74,5 +75,27 @@ export async function benchSolve(file: string, nodes: number): Promise<Record<st
     marchMs: round(median(parts.march)),
     totalMs: round(total.warm),
     coldMs: round(total.cold),
+    movedAmbientMs: round(moved),
   };
+}
+
+/** Code path: surroundings moved by a degree, everything else kept from the run before, to answers again. */
+async function benchMovedAmbient(text: string, nodes: number): Promise<number> {
+  const document = JSON.parse(text) as {
+    stages: { ambient?: number; sides: Record<string, { ambient?: number } | string> }[];
+  };
+  const kept = new KeptWork();
+  let by = 0;
+  const timed = await timeRounds(() => {
+    by = 1 - by;
+    const moved = structuredClone(document);
+    for (const stage of moved.stages) {
+      if (typeof stage.ambient === "number") stage.ambient += by;
+      for (const side of Object.values(stage.sides))
+        if (typeof side !== "string" && typeof side.ambient === "number") side.ambient += by;
+    }
+    return solveCase(moved, LIBRARY, { nodes }, { ...context, kept });
+  });
+  kept.release();
+  return timed.warm;
 }
