@@ -27,6 +27,8 @@ export class RowBuilder {
     readonly outline: Outline,
     readonly plan: RowPlan,
     readonly sides: SideNodes,
+    /** share of the trials used up, 0 to 1 */
+    private readonly patience: number,
   ) {
     this.chordsOnSides = sides.from.length;
   }
@@ -43,6 +45,12 @@ export class RowBuilder {
     if (!this.hasFault) this.limitCrossings();
     levelGroups(this.plan);
     return !this.hasFault;
+  }
+
+  /** Rows to try next where so many did not fit: one less, later half of them, in the end none. */
+  fewer(rows: number): number {
+    if (this.patience < 0.4) return rows - 1;
+    return this.patience < 0.7 ? rows >> 1 : 0;
   }
 
   /** The front does not start from this chord on this hand. */
@@ -97,7 +105,7 @@ export class RowBuilder {
   private limitCrossings(): void {
     const crossing = crossingChords(this.sides, this.chordsOnSides);
     for (const { chord, strip, from, to, rows } of this.tops) {
-      if (crossing.has(chord)) this.limit(strip, from, to, rows - 1);
+      if (crossing.has(chord)) this.limit(strip, from, to, this.fewer(rows));
     }
   }
 

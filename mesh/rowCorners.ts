@@ -97,12 +97,12 @@ function layCrossed(builder: RowBuilder, corner: RowCorner): CornerColumns {
     for (let j = 0; j < rows; j++) {
       const isSound = builder.quad(grid[i]![j]!, grid[i]![j + 1]!, grid[i + 1]![j + 1]!, grid[i + 1]![j]!);
       if (isSound) continue;
-      corner.rows = Math.min(corner.rows, Math.max(i, j));
+      corner.rows = Math.min(corner.rows, builder.fewer(Math.max(i, j) + 1));
       builder.hasFault = true;
     }
   }
   if (builder.isPointNear([v, out[rows]!, grid[rows]![rows]!, back[rows]!], [1, 2])) {
-    corner.rows--;
+    corner.rows = Math.min(corner.rows, builder.fewer(rows));
     builder.hasFault = true;
   }
   return { end: [...grid[rows]!], start: grid.map((row) => row[rows]!) };

@@ -20,10 +20,15 @@ import { LEFT_HAND, placeSideNodes, type SideNodes } from "./sideNodes.ts";
 import type { SizeSources } from "./sizeSources.ts";
 import type { SizeTree } from "./sizeTree.ts";
 
-/** Trials to make all rows fit; each failed one takes rows away somewhere. */
+/** Trials to make all rows fit; each failed one takes rows away somewhere, the later the more. */
 const MOST_TRIALS = 24;
+/** Rounds in which corners are lowered until their strips agree; each lowers some corner by a row at least. */
+const MOST_ROUNDS = 300;
 
-/** Side nodes and, where the plan says so, rows of nodes beside them. */
+/**
+ * Side nodes and, where the plan says so, rows of nodes beside them. Rows that cannot be made to fit in the bounded
+ * number of trials are left out altogether.
+ */
 export function placeSidesAndRows(
   outline: Outline,
   tree: SizeTree,
@@ -32,9 +37,11 @@ export function placeSidesAndRows(
 ): SideNodes {
   if (plan) {
     countRowsAtCorners(plan, outline, tree);
-    for (let trial = 0; trial < MOST_TRIALS; trial++) {
+    for (let trial = 0, round = 0; trial < MOST_TRIALS && round < MOST_ROUNDS; round++) {
       const sides = placeSideNodes(outline, tree, sources, rowNeeds(plan, outline));
-      if (new RowLayer(outline, tree, sources, plan, sides).lay()) return sides;
+      const outcome = new RowLayer(outline, tree, sources, plan, sides, trial / MOST_TRIALS).lay();
+      if (outcome === "laid") return sides;
+      if (outcome === "faulty") trial++;
     }
   }
   return placeSideNodes(outline, tree, sources);
@@ -64,20 +71,21 @@ class RowLayer {
     private readonly sources: SizeSources,
     private readonly plan: RowPlan,
     private readonly sides: SideNodes,
+    patience: number,
   ) {
-    this.builder = new RowBuilder(outline, plan, sides);
+    this.builder = new RowBuilder(outline, plan, sides, patience);
   }
 
-  /** True when all rows fit; false when some were taken away and the side nodes must be placed again. */
-  lay(): boolean {
+  /** laid when all rows fit; else rows were taken away and the side nodes must be placed again. */
+  lay(): "laid" | "lowered" | "faulty" {
     const columns = this.plan.strips.map((strip) => this.columnsOf(strip));
-    if (!this.cornersAgree(columns)) return false;
+    if (!this.cornersAgree(columns)) return "lowered";
     for (const corner of this.plan.corners) this.handed.set(corner, layCorner(this.builder, corner));
     if (!this.builder.hasFault) {
       for (const c of columns) this.layColumns(c);
       for (const c of columns) this.layCells(c);
     }
-    return this.builder.finish();
+    return this.builder.finish() ? "laid" : "faulty";
   }
 
   // ---- counts ----------------------------------------------------------------------------------------------
@@ -197,7 +205,7 @@ class RowLayer {
       if (most === 0) continue;
       const cell = [base[i]!, base[i + 1]!, q[q.length - 1]!, p[p.length - 1]!];
       if (this.builder.isPointNear(cell, [2])) sound = false;
-      if (!sound) this.builder.limit(strip, along[i]!, along[i + 1]!, most - 1);
+      if (!sound) this.builder.limit(strip, along[i]!, along[i + 1]!, this.builder.fewer(most));
       this.builder.topChord(p[p.length - 1]!, q[q.length - 1]!, strip, along[i]!, along[i + 1]!, most);
       this.coverBase(strip, base[i]!, base[i + 1]!, i);
     }
