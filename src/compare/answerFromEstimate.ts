@@ -17,6 +17,7 @@
 import type { Question } from "../case/types.ts";
 import {
   curveThrough,
+  firstComing,
   firstReached,
   integrateOver,
   readCurve,
@@ -75,7 +76,10 @@ export function answerFromEstimate(
     case "when": {
       const going = goingOf(question, history);
       const curve = track(question.where, going);
-      return curve && firstReached(curve, question.reaches, going);
+      if (!curve) return null;
+      return question.going
+        ? firstComing(curve, question.reaches, going)
+        : firstReached(curve, question.reaches, going);
     }
     case "reading": {
       const curve = track(question.where, trendOf(history));

@@ -1,6 +1,10 @@
 /** A curve of an estimate, read between its instants by cubics that keep their sense, stage by stage. */
 
-import { firstReached as firstOf, timeReached as totalOf } from "../heat/crossings.ts";
+import {
+  firstComing as firstComingOf,
+  firstReached as firstOf,
+  timeReached as totalOf,
+} from "../heat/crossings.ts";
 import type { Going, SampledCurve } from "../heat/crossings.ts";
 
 /** One stage on the time of the case [s]. */
@@ -91,6 +95,10 @@ const sampled = (curve: EstimateCurve): SampledCurve => ({
 /** First instant not before `from` at which the level is reached; null when it never is. */
 export const firstReached = (curve: EstimateCurve, level: number, going: Going, from = 0): number | null =>
   firstOf(sampled(curve), level, going, from);
+
+/** First instant at which the level is come to from the other side; as firstReached where it never was there. */
+export const firstComing = (curve: EstimateCurve, level: number, going: Going): number | null =>
+  firstComingOf(sampled(curve), level, going);
 
 /** Seconds spent at or beyond the level. */
 export const timeReached = (curve: EstimateCurve, level: number, going: Going): number =>

@@ -34,6 +34,22 @@ export function firstReached(curve: SampledCurve, level: number, going: Going, f
   return null;
 }
 
+/**
+ * First instant at which the curve comes to the level from the other side: a part that starts below a level has
+ * "fallen to" it only after it was above. Where it never was on the other side, as firstReached.
+ */
+export function firstComing(curve: SampledCurve, level: number, going: Going): number | null {
+  const { times, values } = curve;
+  for (let i = 0; i < times.length; i++)
+    if (!reached(values[i]!, level, going))
+      return firstReached(curve, level, going, times[i]!) ?? beforeAll(curve, level, going);
+  return firstReached(curve, level, going);
+}
+
+/** Reached at the start and never again: the start is the answer. */
+const beforeAll = (curve: SampledCurve, level: number, going: Going): number | null =>
+  reached(curve.values[0]!, level, going) ? curve.times[0]! : null;
+
 /** Total time that the curve spends at or above (`up`) or at or below (`down`) the level [s]. */
 export function timeReached(curve: SampledCurve, level: number, going: Going): number {
   let total = 0;

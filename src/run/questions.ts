@@ -1,6 +1,6 @@
 /** The questions of a case, answered from its run: exact instants are sought on the dense field, not between samples. */
 import type { Question } from "../case/types.ts";
-import { firstReached, timeReached } from "../heat/crossings.ts";
+import { firstComing, firstReached, timeReached } from "../heat/crossings.ts";
 import type { Going, SampledCurve } from "../heat/crossings.ts";
 import { goingFrom } from "./marchStages.ts";
 import { heatWeights } from "./ledger.ts";
@@ -94,7 +94,9 @@ function answerWhen(question: Of<"when">, asked: Asked): FieldAnswer {
   const going = goingTo(asked, question.where, question.reaches, question.going);
   const track = trackFor(asked.tracks, question.where, going);
   const curve = curveOf(asked, track);
-  const time = firstReached(curve, question.reaches, going);
+  const time = question.going
+    ? firstComing(curve, question.reaches, going)
+    : firstReached(curve, question.reaches, going);
   if (time === null) return unanswered(question, "s", notReached(curve, going));
   return {
     question,

@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { firstReached, timeReached } from "../../src/heat/crossings.ts";
+import { firstComing, firstReached, timeReached } from "../../src/heat/crossings.ts";
 
 /** Newton cooling from 100 to 0, time constant 10, sampled every 5: exact passings are 10 ln(100 / level). */
 const times = Array.from({ length: 13 }, (_, i) => 5 * i);
@@ -22,6 +22,19 @@ describe("passing a level", () => {
   it("two levels passed between the same two samples are told apart (passages were once cut to the sample)", () => {
     const first = firstReached(curve, 95, "down")!;
     expect(firstReached(curve, 70, "down", first)).toBeCloseTo(passes(70), 7);
+  });
+
+  it("a part that starts below a level has fallen to it only after it was above", () => {
+    const hump = {
+      times: [0, 1, 2, 3],
+      values: [20, 80, 60, 20],
+      at: (t: number) => (t < 1 ? 20 + 60 * t : t < 2 ? 100 - 20 * t : 140 - 40 * t),
+    };
+    expect(firstReached(hump, 50, "down")).toBe(0);
+    expect(firstComing(hump, 50, "down")).toBeCloseTo(2.25, 8);
+    expect(firstComing(hump, 50, "up")).toBeCloseTo(0.5, 8);
+    expect(firstComing(hump, 90, "down")).toBe(0);
+    expect(firstComing(hump, 90, "up")).toBeNull();
   });
 
   it("time spent beyond a level counts whole and partial intervals", () => {
