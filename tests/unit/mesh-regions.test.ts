@@ -3,6 +3,7 @@ import { checkMesh } from "../../mesh/checkMesh.ts";
 import { MOST_NODES } from "../../mesh/defaults.ts";
 import { meshRegions } from "../../mesh/meshRegions.ts";
 import { HISTOGRAM_STEP_DEG, meshQuality } from "../../mesh/quality.ts";
+import { refineMesh } from "../../mesh/refineMesh.ts";
 import type { MeshRequest, Point } from "../../mesh/types.ts";
 import { meshFigures } from "../helpers/meshFigures.ts";
 import { extremes, mapOutline, parts, regionOf } from "../helpers/outlines.ts";
@@ -24,6 +25,34 @@ describe("parts of the work, from 500 to 10,000 nodes", () => {
       }
     });
   }
+});
+
+describe("size on demand", () => {
+  for (const [name, nodes] of [
+    ["shaft", 60_000],
+    ["bottle", 60_000],
+    ["ingot", 300_000],
+  ] as const) {
+    it(`${name}: ${nodes} nodes within 15 %, of the promised quality`, () => {
+      const mesh = meshRegions({ regions: parts[name]!, nodes });
+      expect(Math.abs(mesh.nodes.length / 2 / nodes - 1)).toBeLessThan(0.15);
+      const quality = meshQuality(mesh);
+      expect(quality.minAngleDeg).toBeGreaterThanOrEqual(31);
+      expect(quality.maxAngleDeg).toBeLessThanOrEqual(120);
+      expect(quality.meanQuality).toBeGreaterThanOrEqual(0.96);
+    });
+  }
+
+  it("fewer nodes than an outline has use for give the coarsest sound mesh, refinable", () => {
+    for (const regions of Object.values({ ...parts, ...extremes })) {
+      for (const nodes of [3, 30, 120]) {
+        const request = { regions, nodes };
+        const mesh = meshRegions(request);
+        expect(checkMesh(mesh, request)).toEqual([]);
+        expect(checkMesh(refineMesh(mesh), request)).toEqual([]);
+      }
+    }
+  });
 });
 
 describe("outlines at the edge of what is promised", () => {
