@@ -5,6 +5,7 @@ import type { Case } from "../case/types.ts";
 import { answerByEstimates } from "../compare/compareAnswer.ts";
 import type { ComparisonContext } from "../compare/compareAnswer.ts";
 import { estimateCase } from "../compare/estimateCase.ts";
+import type { CaseFacts } from "../compare/facts.ts";
 import type { Estimates } from "../compare/types.ts";
 import { drawnTriangles } from "../fem/elementMesh.ts";
 import type { ElementOrder } from "../fem/elementMesh.ts";
@@ -35,7 +36,7 @@ export function assembleResult(gathered: Gathered): CaseResult {
   const level = levels.at(-1)!;
   const { history, frames } = level.recording;
   const facts = estimateFacts(input, profile, level.timeline, history.time);
-  const estimates = estimateCase(facts);
+  const estimates = estimatesBeside(facts);
   const context = comparisonContext(gathered, level, facts.volumetricHeatCapacity * facts.volume);
   const axisReach = ON_AXIS * profile.high[0];
   const { triangles, triangleRegion } = drawnTriangles(level.part.mesh);
@@ -54,6 +55,20 @@ export function assembleResult(gathered: Gathered): CaseResult {
     warnings: [...gathered.warnings, ...level.warnings],
     quality: gathered.quality,
   };
+}
+
+/** The field does not depend on the estimates: where they break down, it stands without them and says so. */
+function estimatesBeside(facts: CaseFacts): Estimates {
+  try {
+    return estimateCase(facts);
+  } catch (error) {
+    const reason = error instanceof Error ? error.message : String(error);
+    return {
+      lumped: null,
+      series: null,
+      remarks: [`The quick estimates could not be worked out: ${reason}.`],
+    };
+  }
 }
 
 function meshFacts(level: Level, profile: Profile): MeshFacts {
