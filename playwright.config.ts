@@ -1,4 +1,4 @@
-/** Browser tests: the built page (dist/page) in a real Chromium, one at a time. */
+/** Browser tests: the built page (dist/page) in a real Chromium. */
 import { defineConfig } from "@playwright/test";
 
 const PORT = 4173;
@@ -6,7 +6,7 @@ const PORT = 4173;
 export default defineConfig({
   testDir: "tests/ui",
   outputDir: "test-results",
-  workers: 1,
+  workers: 2,
   timeout: 60_000,
   expect: { timeout: 15_000 },
   reporter: [["list"]],

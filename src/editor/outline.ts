@@ -106,6 +106,16 @@ export function removeVertex(draft: CaseDocument, { index, ...place }: LoopIndex
   loop.splice(index, 1);
 }
 
+/** Puts both ends of a side on the axis: closes the gap that it left. */
+export function closeToAxis(draft: CaseDocument, { index, ...place }: LoopIndex): void {
+  const loop = loopOf(draft, place);
+  const vertex = loop[index];
+  if (!vertex) return;
+  delete vertex.through;
+  for (const end of [vertex, loop[(index + 1) % loop.length]!])
+    end.at = writePlace(end.at, [0, siOf(end.at[1], "length")]);
+}
+
 /** Makes a side an arc through a place, or one that bulges outwards a little. */
 export function bendSide(draft: CaseDocument, { index, ...place }: LoopIndex, through?: Place): void {
   const loop = loopOf(draft, place);

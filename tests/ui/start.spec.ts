@@ -151,3 +151,13 @@ for (const [what, change, tells] of FAULTY)
     await settle(page);
     expect((await documentOf(page)).title).toBe("Quick bar");
   });
+
+test("a gap to the axis is told with its size and closed at once", async ({ page }) => {
+  await openQuick(page);
+  await pick(page, "gap.json", JSON.stringify(QUICK).replace('[0,"80 mm"]', '["0.4 mm","80 mm"]'));
+  const card = page.getByRole("alert", { name: "Fault" });
+  await expect(card).toContainText(/gap of 0\.4\smm to the axis/);
+  await card.getByRole("button", { name: "Close the gap" }).click();
+  await settle(page);
+  await expect(card).toBeHidden();
+});

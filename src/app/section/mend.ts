@@ -5,7 +5,7 @@ import { customElement, property } from "lit/decorators.js";
 import { pathSteps } from "../../case/path.ts";
 import type { CaseDocument, CaseProblem } from "../../case/types.ts";
 import { conditionOf } from "../../editor/conditions.ts";
-import { FEWEST_VERTICES, removeVertex } from "../../editor/outline.ts";
+import { closeToAxis, FEWEST_VERTICES, removeVertex } from "../../editor/outline.ts";
 import type { LoopIndex } from "../../editor/outline.ts";
 import { NOTHING } from "../../editor/selection.ts";
 import type { Selection } from "../../editor/selection.ts";
@@ -112,6 +112,15 @@ export class CorelagMend extends LitElement {
     }`;
   }
 
+  /** A gap to the axis can be closed at once. */
+  private gapActs(problem: CaseProblem): TemplateResult {
+    const side = placeOfPath(problem.path);
+    if (!side) return html`${this.undoAct()}`;
+    const close = (): void =>
+      sendEdit(this, "closing the gap to the axis", (draft) => closeToAxis(draft, side));
+    return html`<button class="act main" @click=${close}>Close the gap</button>${this.undoAct()}`;
+  }
+
   private undoAct(): TemplateResult | typeof nothing {
     if (this.undoLabel === null) return nothing;
     return html`<button class="act main" @click=${() => send(this, "corelag-do", { kind: "undo" })}>
@@ -121,6 +130,7 @@ export class CorelagMend extends LitElement {
 
   private acts(problem: CaseProblem): TemplateResult {
     if (problem.code === "side-without-condition") return this.conditionActs(problem);
+    if (problem.code === "outline-gap-to-axis") return this.gapActs(problem);
     const place = this.pointOf(problem);
     const loop = place && loopLength(this.document!, place);
     const take = (at: LoopIndex) => (): void =>

@@ -3,6 +3,7 @@ import { arcThrough } from "../../../src/editor/arcs.ts";
 import {
   arcOfSide,
   bendSide,
+  closeToAxis,
   insertVertex,
   loopOf,
   moveSide,
@@ -30,6 +31,16 @@ describe("points of the outline", () => {
     const document = ingot();
     moveVertex(document, side(1), [-0.05, 0.1]);
     expect(places(document)[1]).toEqual([0, 0.1]);
+  });
+
+  it("a gap to the axis is closed by both ends of the side", () => {
+    const document = ingot();
+    const last = document.part.regions[0]!.outline.length - 1;
+    moveVertex(document, side(last), [0.004, places(document)[last]![1]]);
+    moveVertex(document, side(0), [0.004, 0]);
+    closeToAxis(document, side(last));
+    expect([places(document)[last]![0], places(document)[0]![0]]).toEqual([0, 0]);
+    expect(places(document)[1]![0]).toBeGreaterThan(0.1);
   });
 
   it("a typed coordinate stands as it was typed", () => {
