@@ -17,7 +17,19 @@ export interface Chords {
   readonly bulge: Float64Array;
   /** 1 where nothing of the part lies on one hand: only these tell inside from outside */
   readonly outer: Uint8Array;
+  readonly bands: Bands;
 }
+
+/** Outer chords by the horizontal bands that they reach, so that a ray meets few of them. */
+interface Bands {
+  readonly low: number;
+  readonly perMetre: number;
+  /** where each band's chords begin in `chords`, one more than bands */
+  readonly first: Int32Array;
+  readonly chords: Int32Array;
+}
+
+const MOST_BANDS = 1024;
 
 export function chordsOf(outline: Outline): Chords {
   const counts = outline.pieces.map(chordCount);
@@ -40,7 +52,34 @@ export function chordsOf(outline: Outline): Chords {
       outer[c] = side.left < 0 || side.right < 0 ? 1 : 0;
     }
   });
-  return { count, ends, piece, bulge, outer };
+  return { count, ends, piece, bulge, outer, bands: bandsOf(ends, outer) };
+}
+
+function bandsOf(ends: Float64Array, outer: Uint8Array): Bands {
+  let [low, high] = [Infinity, -Infinity];
+  for (let i = 1; i < ends.length; i += 2) {
+    low = Math.min(low, ends[i]!);
+    high = Math.max(high, ends[i]!);
+  }
+  const count = Math.min(MOST_BANDS, Math.ceil(8 * Math.sqrt(outer.length)));
+  const perMetre = high > low ? count / (high - low) : 0;
+  const bandOf = (y: number) => Math.min(count - 1, Math.max(0, Math.floor((y - low) * perMetre)));
+  const forAll = (visit: (band: number, chord: number) => void) => {
+    for (let c = 0; c < outer.length; c++) {
+      if (!outer[c]) continue;
+      const [y0, y1] = [ends[4 * c + 1]!, ends[4 * c + 3]!];
+      for (let b = bandOf(Math.min(y0, y1)); b <= bandOf(Math.max(y0, y1)); b++) visit(b, c);
+    }
+  };
+  const first = new Int32Array(count + 1);
+  forAll((band) => first[band + 1]!++);
+  for (let b = 0; b < count; b++) first[b + 1]! += first[b]!;
+  const chords = new Int32Array(first[count]!);
+  const next = first.slice();
+  forAll((band, chord) => {
+    chords[next[band]!++] = chord;
+  });
+  return { low, perMetre, first, chords };
 }
 
 function chordCount(piece: Piece): number {
@@ -48,12 +87,13 @@ function chordCount(piece: Piece): number {
 }
 
 /** True when the place lies in some region: the ray to the right crosses an odd number of outer chords. */
-export function isInside(chords: Chords, x: number, y: number): boolean {
-  const { ends, outer, count } = chords;
+export function isInside({ ends, bands }: Chords, x: number, y: number): boolean {
+  const { first, chords } = bands;
+  const band = Math.min(first.length - 2, Math.floor((y - bands.low) * bands.perMetre));
+  if (!(band >= 0)) return false;
   let inside = false;
-  for (let c = 0; c < count; c++) {
-    if (!outer[c]) continue;
-    const i = 4 * c;
+  for (let k = first[band]!; k < first[band + 1]!; k++) {
+    const i = 4 * chords[k]!;
     const y0 = ends[i + 1]!;
     const y1 = ends[i + 3]!;
     if (y0 > y === y1 > y) continue;

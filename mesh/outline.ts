@@ -195,13 +195,29 @@ function placePoints(
   return { pointVertex, inner };
 }
 
+function boxAround({ ax, ay, bx, by, arc }: Curve, margin: number) {
+  const ends = [[ax, ay] as const, [bx, by] as const, ...(arc ? arcExtremes(arc) : [])];
+  const xs = ends.map(([x]) => x);
+  const ys = ends.map(([, y]) => y);
+  return {
+    x0: Math.min(...xs) - margin,
+    x1: Math.max(...xs) + margin,
+    y0: Math.min(...ys) - margin,
+    y1: Math.max(...ys) + margin,
+  };
+}
+
 function cutSides(sides: readonly Piece[], places: PlaceBook, tolerance: number): Piece[] {
   const pieces: Piece[] = [];
   for (const side of sides) {
     const cuts: [t: number, vertex: number][] = [];
+    const reach = boxAround(side, 2 * tolerance);
     for (let v = 0; v < places.x.length; v++) {
+      const x = places.x[v]!;
+      const y = places.y[v]!;
+      if (x < reach.x0 || x > reach.x1 || y < reach.y0 || y > reach.y1) continue;
       if (v === side.a || v === side.b) continue;
-      const t = shareOnCurve(side, places.x[v]!, places.y[v]!, tolerance);
+      const t = shareOnCurve(side, x, y, tolerance);
       if (t > 0 && t < 1) cuts.push([t, v]);
     }
     cuts.sort((p, q) => p[0] - q[0]);

@@ -20,6 +20,8 @@ import type { SideNodes } from "./sideNodes.ts";
 import { SOURCE_STRIDE, withLimits, type SizeSources } from "./sizeSources.ts";
 import { SizeTree } from "./sizeTree.ts";
 
+/** Trees built to find the scale for one aim. */
+const MOST_BUILDS = 8;
 /** A tree serves scales this much above the one it was built for. */
 const SCALE_SLACK = 0.03;
 
@@ -123,8 +125,11 @@ class ScaledField {
   }
 
   private buildFor(nodes: number): void {
-    for (let k = 0; k < 8; k++) {
+    for (let k = 0, before = Infinity; k < MOST_BUILDS; k++) {
       const scale = this.scaleFor(nodes);
+      // Limits of sides and arcs alone hold the number of nodes: larger sizes elsewhere change nothing.
+      if (scale > 1 && scale > 0.98 * before) return;
+      before = scale;
       const wanted = Math.max(1, this.built * (scale > 1 ? Math.pow(scale, 1.1) : scale));
       if (Math.abs(wanted / this.built - 1) < 0.015) return;
       this.built = wanted;

@@ -48,10 +48,13 @@ interface SideSamples {
   readonly limit: number;
 }
 
-/** Samples of the whole outline; each piece gets its share of these, 5 at least. */
+/** Samples of the whole outline; each piece gets its share of these, and so many at least. */
 const SAMPLES = 400;
 const MOST_SAMPLES = 200;
 const LEAST_SAMPLES = 5;
+/** An outline of more pieces than this is drawn in short strokes: their ends and middles tell enough. */
+const MANY_PIECES = 300;
+const LEAST_SAMPLES_OF_MANY = 2;
 /** An arc's chords stay off their arc by this share of the gap to the next side at most. */
 const SAGITTA_SHARE = 0.25;
 
@@ -103,13 +106,14 @@ function withFloor(list: readonly number[], finest: number): Float64Array {
 function sampleSizes(outline: Outline, chords: Chords, largest: number, list: number[]): SideSamples[] {
   const perimeter = outline.pieces.reduce((sum, piece) => sum + piece.length, 0);
   const skip = new Uint8Array(outline.pieces.length);
+  const least = outline.pieces.length > MANY_PIECES ? LEAST_SAMPLES_OF_MANY : LEAST_SAMPLES;
   return outline.pieces.map((piece) => {
     const neighbours = [...outline.ends[piece.a]!, ...outline.ends[piece.b]!];
     for (const k of neighbours) skip[k] = 1;
     const n = Math.ceil((piece.length / perimeter) * SAMPLES);
     const samples = samplePiece(
       piece,
-      Math.max(LEAST_SAMPLES, Math.min(MOST_SAMPLES, n)),
+      Math.max(least, Math.min(MOST_SAMPLES, n)),
       largest,
       chords,
       skip,
