@@ -6,20 +6,21 @@ import {
   GRADING_STEP,
   MOST_NODES,
   MOST_PLACINGS,
-  MOST_ROWS,
   PACKING,
   ROW_NODES_SHARE,
   TOO_FINE,
 } from "./defaults.ts";
 import { fillFromSides, type PlacedPoints } from "./front.ts";
 import type { Outline } from "./outline.ts";
-import { rowSizeLimits } from "./rowCounts.ts";
+import { rowSizeLimits, rowsThatFit } from "./rowCounts.ts";
 import { coarsenRows, type RowPlan } from "./rowPlan.ts";
 import { placeSidesAndRows } from "./rowStrips.ts";
 import type { SideNodes } from "./sideNodes.ts";
 import { SOURCE_STRIDE, withLimits, type SizeSources } from "./sizeSources.ts";
 import { SizeTree } from "./sizeTree.ts";
 
+/** Each makes rows thicker by their growth. */
+const MOST_COARSENINGS = 200;
 /** Trees built to find the scale for one aim. */
 const MOST_BUILDS = 8;
 /** A tree serves scales this much above the one it was built for. */
@@ -37,24 +38,77 @@ export function placeNodes(
   plan: RowPlan | null,
   nodes: number,
 ): Placing {
-  if (!plan) return searchPlacing(outline, sources, null, nodes);
-  const scale = new ScaledField(outline, sources, nodes).scaleFor(nodes);
-  for (let k = 0; k < MOST_ROWS; k++) {
-    const limits = rowSizeLimits(plan, outline).map((limit) => limit / Math.min(1, scale));
-    const placing = searchPlacing(outline, withLimits(sources, limits), plan, nodes);
+  if (!plan) return searchPlacing(outline, sources, null, nodes, nodes / PACKING);
+  const field = new ScaledField(outline, sources, nodes);
+  const share = Math.min(1, field.scaleFor(nodes));
+  for (let k = 0; k < MOST_COARSENINGS; k++) {
+    const budget = rowBudget(field.tree, sources, plan, nodes);
+    if (budget.inRows > 1.3 * ROW_NODES_SHARE * nodes) {
+      coarsenRows(plan);
+      continue;
+    }
+    const limits = rowSizeLimits(plan, outline).map((limit) => limit / share);
+    const placing = searchPlacing(outline, withLimits(sources, limits), plan, nodes, budget.aim);
     const { sides, points } = placing;
     if (sides.x.length - sides.firstRowNode <= ROW_NODES_SHARE * Math.min(nodes, points.count))
       return placing;
     coarsenRows(plan);
   }
-  return searchPlacing(outline, sources, null, nodes);
+  return searchPlacing(outline, sources, null, nodes, nodes / PACKING);
+}
+
+/**
+ * Nodes that rows will take, estimated, and the nodes left for the size field to aim at: rows * columns along the
+ * strips, and rows squared where they cross in a corner.
+ */
+function rowBudget(
+  tree: SizeTree,
+  sources: SizeSources,
+  plan: RowPlan,
+  nodes: number,
+): { inRows: number; aim: number } {
+  const { columns, length } = columnsAlong(sources, plan);
+  const grids = plan.corners.filter(({ kind }) => kind === "crossed").length;
+  const strip = plan.strips.reduce((finest, s) => (s.thickness < finest.thickness ? s : finest));
+  let scale = 1;
+  let inRows = 0;
+  for (let k = 0; k < 20; k++) {
+    const rows = rowsThatFit(strip, (scale * length) / columns, Infinity);
+    inRows = (rows * columns) / scale + grids * rows * rows;
+    const left = Math.max(nodes - inRows, 0.2 * nodes);
+    const { area, line } = tree;
+    const wanted = (line + Math.sqrt(line * line + 4 * left * area)) / (2 * left);
+    if (Math.abs(wanted / scale - 1) < 0.02) break;
+    scale = Math.sqrt(scale * wanted);
+  }
+  return { inRows, aim: Math.max(0.2 * nodes, nodes - inRows) / PACKING };
+}
+
+/** Columns of all strips at scale 1 and the length of the strips [m]. */
+function columnsAlong(sources: SizeSources, { strips }: RowPlan): { columns: number; length: number } {
+  const withRows = new Set(strips.map(({ piece }) => piece));
+  let [columns, length] = [0, 0];
+  sources.pieceOf.forEach((piece, i) => {
+    if (!withRows.has(piece)) return;
+    const s = sources.stretches.subarray(SOURCE_STRIDE * (sources.sideStart + i));
+    const stretch = Math.hypot(s[2]!, s[3]!);
+    length += stretch;
+    columns += (2 * stretch) / (s[4]! + s[5]!);
+  });
+  return { columns, length };
 }
 
 /** Places nodes, and again with another aim while their number is off; no triangulation is made meanwhile. */
-function searchPlacing(outline: Outline, sources: SizeSources, plan: RowPlan | null, nodes: number): Placing {
+function searchPlacing(
+  outline: Outline,
+  sources: SizeSources,
+  plan: RowPlan | null,
+  nodes: number,
+  aim: number,
+): Placing {
   const inner = outline.inner.flat();
   const field = new ScaledField(outline, sources, nodes);
-  const search = new AimSearch(nodes);
+  const search = new AimSearch(nodes, aim);
   let best: Placing | null = null;
   for (let k = 0; k < MOST_PLACINGS; k++) {
     field.aimAt(search.aim);
@@ -71,12 +125,12 @@ function searchPlacing(outline: Outline, sources: SizeSources, plan: RowPlan | n
 
 /** Finds the aim that gives the nodes wanted: in proportion first, then by the slope between the last two trials. */
 class AimSearch {
-  aim: number;
   private last: { aim: number; count: number } | null = null;
 
-  constructor(private readonly wanted: number) {
-    this.aim = wanted / PACKING;
-  }
+  constructor(
+    private readonly wanted: number,
+    public aim: number,
+  ) {}
 
   take(count: number): void {
     const { aim, last, wanted } = this;

@@ -25,27 +25,29 @@ const MOST_FRUITLESS = 4;
 
 /** Returns the number of triangles still below the bar. */
 export function repair(work: RepairWork): number {
-  let poor = poorTriangles(work.mesh);
+  let poor = poorTriangles(work);
   let fruitless = 0;
   for (let round = 0; round < REPAIR_ROUNDS && poor.length > 0 && fruitless < MOST_FRUITLESS; round++) {
     liftAround(work, poor, 1 + fruitless);
     if (round % 2 === 0) changeNodes(work, poor);
     const before = poor.length;
-    poor = poorTriangles(work.mesh);
+    poor = poorTriangles(work);
     fruitless = poor.length < before ? 0 : fruitless + 1;
   }
   return poor.length / 3;
 }
 
-/** Corners of all triangles below the bar, 3 each. */
-function poorTriangles({ corner, used, xy }: Triangulation): number[] {
+/** Corners of all triangles below the bar, 3 each; those of rows are thin by intent and have no node that may move. */
+function poorTriangles({ mesh: { corner, used, xy }, fixed, sliders }: RepairWork): number[] {
   const poor: number[] = [];
+  const isStuck = (v: number) => fixed[v] === 1 && !(v < sliders.piece.length && sliders.piece[v]! >= 0);
   for (let e = 0; e < used; e += 3) {
     const a = corner[e]!;
     if (a < 0) continue;
     const b = corner[e + 1]!;
     const c = corner[e + 2]!;
-    if (shapeOf(xy, a, b, c) < BAR) poor.push(a, b, c);
+    if (shapeOf(xy, a, b, c) >= BAR || (isStuck(a) && isStuck(b) && isStuck(c))) continue;
+    poor.push(a, b, c);
   }
   return poor;
 }
