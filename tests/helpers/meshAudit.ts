@@ -8,8 +8,8 @@ import { rowsEverywhere } from "./outlines.ts";
 import { randomCase, randomNumbers, type RandomCase } from "./randomOutlines.ts";
 
 /**
- * Means that hold for whole families; the issue's 0.96 is met by all but about one mesh in a hundred: those of fewer
- * than 1,000 nodes of which most are given, by vertices on tilted sides or by walls of one triangle.
+ * Means that hold for whole families. All but about one mesh in a hundred reach 0.96; the others have fewer than 1,000
+ * nodes of which most are given, by vertices on tilted sides or by walls of one triangle.
  */
 const LEAST_MEAN: Record<string, number> = { thin: 0.9, tilted: 0.92 };
 const LEAST_MEAN_ELSE = 0.945;

@@ -12,10 +12,10 @@ const COUNT = Number(process.env["MESH_OUTLINES"] ?? 500);
 const FIRST = Number(process.env["MESH_SEED"] ?? 0);
 const BLOCK = Math.max(50, Math.ceil(COUNT / 20));
 /**
- * Repair has no proof: of 20,000 outlines some ten keep one promise not quite, all of them thin walls or many given
- * vertices at fewer than 1,000 nodes. None of the 500 of the ordinary run does.
+ * Neither repair nor the count of nodes has a proof. Of seeds 0 to 19,999 two missed a promise, both thin walls a
+ * hair over 15 % off the nodes asked for (3028, 18193); none of the 500 of the ordinary run does.
  */
-const EXCEPTIONS = Math.floor(COUNT / 1000);
+const EXCEPTIONS = Math.floor(COUNT / 5000);
 
 function complaints(first: number, count: number, audit: (seed: number) => string[]): string[] {
   const found: string[] = [];
@@ -31,7 +31,7 @@ function complaints(first: number, count: number, audit: (seed: number) => strin
 
 /** Complaints about figures, which may be few; all others must not be at all. */
 const isAboutFigures = (what: string) =>
-  /smallest angle (30|29)|mean quality|nodes for|edges not Delaunay/.test(what);
+  /smallest angle 30|nodes for/.test(what);
 
 describe(`${COUNT} random outlines from seed ${FIRST}`, { timeout: 3_600_000 }, () => {
   const allowed: string[] = [];
