@@ -30,8 +30,7 @@ function complaints(first: number, count: number, audit: (seed: number) => strin
 }
 
 /** Complaints about figures, which may be few; all others must not be at all. */
-const isAboutFigures = (what: string) =>
-  /smallest angle 30|nodes for/.test(what);
+const isAboutFigures = (what: string) => /smallest angle 30|nodes for/.test(what);
 
 describe(`${COUNT} random outlines from seed ${FIRST}`, { timeout: 3_600_000 }, () => {
   const allowed: string[] = [];
